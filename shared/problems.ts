@@ -1,0 +1,33 @@
+/**
+ * Every refusal that the program gives, with its HTTP status and title: a closed list. The sentence beside it is
+ * made where the refusal is, from the figures at hand.
+ */
+export const PROBLEMS = {
+  malformed: { status: 400, title: 'The request can’t be read' },
+  not_signed_in: { status: 401, title: 'Not signed in' },
+  not_permitted: { status: 403, title: 'Not permitted' },
+  cross_site: { status: 403, title: 'Sent from another site' },
+  not_found: { status: 404, title: 'Not found' },
+  wrong_method: { status: 405, title: 'Wrong method' },
+  conflict: { status: 409, title: 'Changed meanwhile' },
+  not_enough: { status: 409, title: 'Not enough metal' },
+  too_large: { status: 413, title: 'Too large' },
+  wrong_content_type: { status: 415, title: 'Wrong content type' },
+  invalid: { status: 422, title: 'Some entries are not right' },
+  key_reused: { status: 422, title: 'Request key used before' },
+  tare_over_gross: { status: 422, title: 'Tare over gross' },
+  stones_over_net: { status: 422, title: 'Stones over net' },
+  date_ahead: { status: 422, title: 'Date ahead' },
+  closed_period: { status: 422, title: 'Period closed' },
+  below_on_day: { status: 409, title: 'Not there on that day' },
+  too_many: { status: 429, title: 'Too many tries' },
+  failed: { status: 500, title: 'Our own fault' },
+  unavailable: { status: 503, title: 'For now not possible' },
+} as const satisfies Record<string, { readonly status: number; readonly title: string }>;
+
+export type ProblemCode = keyof typeof PROBLEMS;
+
+/** Whether a word is one of the known refusals. */
+export function isProblemCode(code: string): code is ProblemCode {
+  return Object.hasOwn(PROBLEMS, code);
+}
