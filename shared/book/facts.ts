@@ -7,12 +7,16 @@ import type { Metal } from '../mass/vector.ts';
 import type { MassVector } from '../mass/vector.ts';
 import type { Micrograms } from '../mass/micrograms.ts';
 import type { Account } from './account.ts';
-import type { DetailLeaf } from './draft.ts';
+import type { DetailLeaf, DocumentRef } from './draft.ts';
 import type { Holding, JobHolding } from './holding.ts';
 import type { RecordKind } from './kinds.ts';
 import type { Lot, LotForm } from './lot.ts';
 
-/** What an event asks to be read before it can be drafted. Result accounts and settings are always read. */
+/**
+ * What an event asks to be read before it can be drafted. Result accounts, sold, opening stock, people and settings
+ * are always read; so is every account, lot and party that something else read here names (a holding's account and
+ * lot, a lot's owner, a job's customer).
+ */
 export interface FactsNeeded {
   readonly account_ids?: readonly string[];
   /** Lots by id: the lot and every holding of it. */
@@ -21,7 +25,12 @@ export interface FactsNeeded {
   readonly place_ids?: readonly string[];
   /** Parties whose accounts of any kind are wanted. */
   readonly party_ids?: readonly string[];
+  /** Vouchers with their entries, and the handovers they made. */
   readonly voucher_ids?: readonly string[];
+  /** Vouchers that are to be undone or mended: as `voucher_ids`, with every holding and entry of their lots. */
+  readonly trace_voucher_ids?: readonly string[];
+  /** Files that are to be kept with the record. */
+  readonly document_ids?: readonly string[];
   /** Lots of which every entry is wanted, oldest first (where did these sweeps come from?). */
   readonly history_lot_ids?: readonly string[];
   readonly job_ids?: readonly string[];
@@ -53,6 +62,18 @@ export interface RecordedEntry extends Holding {
   readonly line: string;
   readonly operation: string | null;
   readonly bench: string | null;
+  /** The voucher that reversed the one this entry belongs to, if any. */
+  readonly reversed_by: string | null;
+}
+
+/** A handover that a voucher made, as it stands. */
+export interface Handover {
+  readonly id: string;
+  readonly voucher_id: string;
+  readonly place_id: string;
+  readonly from_person_id: string;
+  readonly to_person_id: string;
+  readonly state: 'waiting' | 'acknowledged' | 'disputed';
 }
 
 export interface Party {
@@ -146,6 +167,8 @@ export interface Facts {
   readonly holdings: readonly Holding[];
   readonly job_holdings: readonly JobHolding[];
   readonly vouchers: ReadonlyMap<string, RecordedVoucher>;
+  readonly handovers: readonly Handover[];
+  readonly documents: ReadonlyMap<string, DocumentRef>;
   readonly lot_entries: readonly RecordedEntry[];
   readonly parties: ReadonlyMap<string, Party>;
   readonly jobs: ReadonlyMap<string, Job>;

@@ -16,6 +16,7 @@ export const EVENT_NAMES = [
   'issue',
   'acknowledge',
   'dispute-handover',
+  'settle-dispute',
   'weigh-back',
   'delivery',
   'sweep-up',
