@@ -2,11 +2,11 @@
  * Workshops, the persons in them and the head of each workshop's chain. Sign-in accounts stand in a migration of
  * their own; a person here is somebody whom the book names.
  */
-import type { Migration } from "./migration.ts";
-import { wallRound } from "./migration.ts";
+import type { Migration } from './migration.ts';
+import { wallRound } from './migration.ts';
 
 export const workshopsAndPersons: Migration = {
-  name: "2026-12-01-01-workshops-and-persons",
+  name: '2026-12-01-01-workshops-and-persons',
   up: `
     CREATE FUNCTION current_workshop() RETURNS uuid LANGUAGE sql STABLE AS
       $$ SELECT nullif(current_setting('grainward.workshop', true), '')::uuid $$;
@@ -47,8 +47,8 @@ export const workshopsAndPersons: Migration = {
       lot_serial       bigint NOT NULL DEFAULT 0
     );
 
-    ${wallRound("person")}
-    ${wallRound("workshop_head")}
+    ${wallRound('person')}
+    ${wallRound('workshop_head')}
     ALTER TABLE workshop ENABLE ROW LEVEL SECURITY;
     ALTER TABLE workshop FORCE ROW LEVEL SECURITY;
     CREATE POLICY workshop_itself ON workshop

@@ -2,16 +2,16 @@
  * The book: accounts, lots, records, entries and holdings, with the rules of the book as constraints and triggers.
  * Only `post_records` (next migrations) writes here; the program's role may read.
  */
-import type { Migration } from "./migration.ts";
-import { wallRound } from "./migration.ts";
+import type { Migration } from './migration.ts';
+import { wallRound } from './migration.ts';
 
 const masses = (suffix: string) =>
-  ["gross_ug", "gold_ug", "silver_ug", "platinum_ug", "palladium_ug"]
+  ['gross_ug', 'gold_ug', 'silver_ug', 'platinum_ug', 'palladium_ug']
     .map((m) => `${m} bigint ${suffix}`)
-    .join(",\n      ");
+    .join(',\n      ');
 
 export const bookTables: Migration = {
-  name: "2026-12-01-02-book-tables",
+  name: '2026-12-01-02-book-tables',
   up: `
     CREATE FUNCTION is_place(kind text) RETURNS boolean LANGUAGE sql IMMUTABLE AS $$
       SELECT kind IN ('safe', 'bench', 'station', 'bin', 'outworker', 'approval', 'courier', 'refiner') $$;
@@ -115,7 +115,7 @@ export const bookTables: Migration = {
       account_id       uuid NOT NULL,
       lot_id           uuid NOT NULL,
       business_date    date NOT NULL,
-      ${masses("NOT NULL")},
+      ${masses('NOT NULL')},
       pieces           bigint,
       PRIMARY KEY (workshop_id, voucher_sequence, line),
       FOREIGN KEY (workshop_id, voucher_sequence) REFERENCES record (workshop_id, sequence),
@@ -131,7 +131,7 @@ export const bookTables: Migration = {
       account_id  uuid NOT NULL,
       lot_id      uuid NOT NULL,
       in_place    boolean NOT NULL,
-      ${masses("NOT NULL")},
+      ${masses('NOT NULL')},
       pieces      bigint,
       PRIMARY KEY (workshop_id, account_id, lot_id),
       FOREIGN KEY (workshop_id, account_id) REFERENCES account (workshop_id, id),
@@ -150,7 +150,7 @@ export const bookTables: Migration = {
       account_id  uuid NOT NULL,
       lot_id      uuid NOT NULL,
       job_id      uuid NOT NULL,
-      ${masses("NOT NULL")},
+      ${masses('NOT NULL')},
       pieces      bigint,
       PRIMARY KEY (workshop_id, account_id, lot_id, job_id)
     ) WITH (fillfactor = 70);
@@ -188,7 +188,7 @@ export const bookTables: Migration = {
     CREATE TRIGGER entry_balances AFTER INSERT ON entry REFERENCING NEW TABLE AS added
       FOR EACH STATEMENT EXECUTE FUNCTION entries_balance();
 
-    ${["account", "lot", "lot_parent", "record", "entry", "holding", "job_holding", "period"].map(wallRound).join("\n")}
+    ${['account', 'lot', 'lot_parent', 'record', 'entry', 'holding', 'job_holding', 'period'].map(wallRound).join('\n')}
     GRANT SELECT ON account, lot, lot_parent, record, entry, holding, job_holding, period TO grainward_app;
   `,
   down: null,

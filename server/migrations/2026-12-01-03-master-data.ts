@@ -2,11 +2,11 @@
  * What the workshop has set: parties, alloys, prices, allowances, settings, jobs, handovers. All of it is written by
  * acts of the chain (`project_act`), so that nobody relabels a price or a party unseen; addresses are not in the chain.
  */
-import type { Migration } from "./migration.ts";
-import { wallRound } from "./migration.ts";
+import type { Migration } from './migration.ts';
+import { wallRound } from './migration.ts';
 
 export const masterData: Migration = {
-  name: "2026-12-01-03-master-data",
+  name: '2026-12-01-03-master-data',
   up: `
     CREATE TABLE party (
       workshop_id uuid NOT NULL REFERENCES workshop,
@@ -94,7 +94,7 @@ export const masterData: Migration = {
     CREATE INDEX handover_by_voucher ON handover (workshop_id, voucher_id);
     CREATE INDEX handover_waiting ON handover (workshop_id, to_person_id) WHERE state IN ('waiting', 'disputed');
 
-    ${["party", "alloy", "price", "allowance", "setting", "job", "handover"].map(wallRound).join("\n")}
+    ${['party', 'alloy', 'price', 'allowance', 'setting', 'job', 'handover'].map(wallRound).join('\n')}
     GRANT SELECT ON party, alloy, price, allowance, setting, job, handover TO grainward_app;
     GRANT UPDATE (email, phone, address) ON party TO grainward_app;
   `,

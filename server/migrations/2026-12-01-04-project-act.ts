@@ -2,10 +2,10 @@
  * What an act changes in the tables that the program reads: accounts, lots, persons, parties, prices, settings.
  * Called by `post_records` only. An act that changes no table (a test recorded, a dossier made) stands in the chain alone.
  */
-import type { Migration } from "./migration.ts";
+import type { Migration } from './migration.ts';
 
 export const projectAct: Migration = {
-  name: "2026-12-01-04-project-act",
+  name: '2026-12-01-04-project-act',
   up: `
     CREATE FUNCTION project_act(w uuid, n bigint, k text, d jsonb, on_day date, moment timestamptz) RETURNS void
       LANGUAGE plpgsql SET search_path = public, pg_temp AS $$
@@ -89,5 +89,5 @@ export const projectAct: Migration = {
       END CASE;
     END $$;
   `,
-  down: "DROP FUNCTION project_act",
+  down: 'DROP FUNCTION project_act',
 };

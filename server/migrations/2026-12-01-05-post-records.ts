@@ -3,15 +3,14 @@
  * previous hash, hashes the exact line, and takes the entries from that line, so that what was hashed and what is
  * stored can't differ. All rules of the book hold here or in the constraints of the tables.
  */
-import type { Migration } from "./migration.ts";
+import type { Migration } from './migration.ts';
 
-const MASSES = ["gross", "gold", "silver", "platinum", "palladium"] as const;
-const columns = MASSES.map((m) => `${m}_ug`).join(", ");
-const each = (make: (mass: string) => string, glue = ", ") =>
-  MASSES.map(make).join(glue);
+const MASSES = ['gross', 'gold', 'silver', 'platinum', 'palladium'] as const;
+const columns = MASSES.map((m) => `${m}_ug`).join(', ');
+const each = (make: (mass: string) => string, glue = ', ') => MASSES.map(make).join(glue);
 
 export const postRecords: Migration = {
-  name: "2026-12-01-05-post-records",
+  name: '2026-12-01-05-post-records',
   up: `
     -- The whole day's closing must hold too: a voucher dated back may not take what a later day's closing has counted.
     CREATE FUNCTION check_day_closings(w uuid, n bigint, on_day date) RETURNS void
@@ -20,14 +19,14 @@ export const postRecords: Migration = {
     BEGIN
       FOR taken IN
         SELECT DISTINCT e.account_id, e.lot_id FROM entry e JOIN account a ON a.workshop_id = w AND a.id = e.account_id
-        WHERE e.workshop_id = w AND e.voucher_sequence = n AND is_place(a.kind) AND (${each((m) => `e.${m}_ug < 0`, " OR ")})
+        WHERE e.workshop_id = w AND e.voucher_sequence = n AND is_place(a.kind) AND (${each((m) => `e.${m}_ug < 0`, ' OR ')})
           AND EXISTS (SELECT 1 FROM entry later WHERE later.workshop_id = w AND later.account_id = e.account_id
             AND later.lot_id = e.lot_id AND later.business_date > on_day)
       LOOP
         SELECT max(business_date) INTO last_short FROM (
           SELECT business_date, ${each((m) => `sum(sum(${m}_ug)) OVER (ORDER BY business_date) AS ${m}`)}
           FROM entry WHERE workshop_id = w AND account_id = taken.account_id AND lot_id = taken.lot_id GROUP BY business_date
-        ) closing WHERE business_date >= on_day AND (${each((m) => `${m} < 0`, " OR ")});
+        ) closing WHERE business_date >= on_day AND (${each((m) => `${m} < 0`, ' OR ')});
         IF last_short IS NOT NULL THEN
           SELECT min(business_date) INTO earliest FROM entry
             WHERE workshop_id = w AND account_id = taken.account_id AND lot_id = taken.lot_id AND business_date > last_short;

@@ -2,11 +2,11 @@
  * What is asked but not yet in the book: request keys (so that the same request records once), acts that wait for a
  * second signature, goldsmiths' requests for metal, and the queue of long work.
  */
-import type { Migration } from "./migration.ts";
-import { wallRound } from "./migration.ts";
+import type { Migration } from './migration.ts';
+import { wallRound } from './migration.ts';
 
 export const requestsAndQueue: Migration = {
-  name: "2026-12-01-07-requests-and-queue",
+  name: '2026-12-01-07-requests-and-queue',
   up: `
     CREATE TABLE request_key (
       workshop_id uuid NOT NULL REFERENCES workshop,
@@ -78,7 +78,7 @@ export const requestsAndQueue: Migration = {
     );
     CREATE INDEX background_job_waiting ON background_job (made_at) WHERE state IN ('queued', 'running');
 
-    ${["request_key", "signature_request", "metal_request", "background_job"].map(wallRound).join("\n")}
+    ${['request_key', 'signature_request', 'metal_request', 'background_job'].map(wallRound).join('\n')}
     GRANT SELECT, INSERT, UPDATE (status, answer) ON request_key TO grainward_app;
     GRANT SELECT, INSERT, UPDATE (state, decided_by, decided_at, decision_note, answer) ON signature_request TO grainward_app;
     GRANT SELECT, INSERT, UPDATE (state, voucher_id) ON metal_request TO grainward_app;

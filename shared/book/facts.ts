@@ -76,6 +76,14 @@ export interface Handover {
   readonly state: 'waiting' | 'acknowledged' | 'disputed';
 }
 
+/** Days that were closed together, and whether they still are. */
+export interface Period {
+  readonly id: string;
+  readonly first_day: string;
+  readonly last_day: string;
+  readonly closed: boolean;
+}
+
 export interface Party {
   readonly id: string;
   readonly kind: 'supplier' | 'customer' | 'refiner' | 'outworker' | 'courier';
@@ -147,7 +155,10 @@ export interface WorkshopSettings {
     readonly limit_ug: Micrograms;
   }[];
   /** Acceptance checks that a received lot owes before release, by form. */
-  readonly acceptance: readonly { readonly form: LotForm; readonly checks: readonly string[] }[];
+  readonly acceptance: readonly {
+    readonly form: LotForm;
+    readonly checks: readonly string[];
+  }[];
 }
 
 /** Makes the ids and lot codes of what an event opens; the preview hands in one that makes provisional ones. */
@@ -160,8 +171,9 @@ export interface IdSource {
 export interface Facts {
   /** Today's business date in the workshop's zone. */
   readonly today: string;
-  /** First date that is not in a closed period, or null where none is closed. */
+  /** Last day of the latest closed period, or null where none is closed. */
   readonly closed_through: string | null;
+  readonly periods: readonly Period[];
   readonly accounts: ReadonlyMap<string, Account>;
   readonly lots: ReadonlyMap<string, Lot>;
   readonly holdings: readonly Holding[];

@@ -30,6 +30,20 @@ export const EVENT_NAMES = [
   'write-off',
   'correction',
   'reversal',
+  'open-place',
+  'open-operation',
+  'rename-account',
+  'close-account',
+  'change-custodian',
+  'set-party',
+  'set-alloy',
+  'set-price',
+  'set-allowance',
+  'set-setting',
+  'open-job',
+  'close-period',
+  'reopen-period',
+  'explain-loss',
 ] as const;
 export type EventName = (typeof EVENT_NAMES)[number];
 

@@ -1,10 +1,10 @@
 /** How the book's nouns stand in JSON: masses as grams, finenesses as decimal strings. */
-import { ACCOUNT_KINDS } from "../book/account.ts";
-import { BASES, LOT_FORMS, ORIGINS, STANDINGS } from "../book/lot.ts";
-import { ACT_KINDS, VOUCHER_KINDS } from "../book/kinds.ts";
-import { ROLES } from "../permissions.ts";
-import { gramsSigned, permille } from "./primitives.ts";
-import { z } from "./zod.ts";
+import { ACCOUNT_KINDS } from '../book/account.ts';
+import { BASES, LOT_FORMS, ORIGINS, STANDINGS } from '../book/lot.ts';
+import { ACT_KINDS, VOUCHER_KINDS } from '../book/kinds.ts';
+import { ROLES } from '../permissions.ts';
+import { gramsSigned, permille } from './primitives.ts';
+import { z } from './zod.ts';
 
 /** The five masses of a row, signed, in grams. */
 export const massFields = {
@@ -107,12 +107,10 @@ export const recordedEntryJson = z
     bench: z.string().nullable(),
     reversed_by: z.string().nullable(),
   })
-  .transform(
-    ({ gross_g, gold_g, silver_g, platinum_g, palladium_g, ...rest }) => ({
-      ...rest,
-      mass: massOf({ gross_g, gold_g, silver_g, platinum_g, palladium_g }),
-    }),
-  );
+  .transform(({ gross_g, gold_g, silver_g, platinum_g, palladium_g, ...rest }) => ({
+    ...rest,
+    mass: massOf({ gross_g, gold_g, silver_g, platinum_g, palladium_g }),
+  }));
 
 export const recordedVoucherJson = z.object({
   id: z.string(),
@@ -137,7 +135,7 @@ export const personJson = z.object({
 
 export const partyJson = z.object({
   id: z.string(),
-  kind: z.enum(["supplier", "customer", "refiner", "outworker", "courier"]),
+  kind: z.enum(['supplier', 'customer', 'refiner', 'outworker', 'courier']),
   name: z.string(),
 });
 

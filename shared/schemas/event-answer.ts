@@ -1,5 +1,5 @@
 /** What the server answers to an event: the records that were posted, or the request that waits for a signature. */
-import { z } from "./zod.ts";
+import { z } from './zod.ts';
 
 export const eventAnswer = z.object({
   records: z.array(

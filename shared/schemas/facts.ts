@@ -1,7 +1,7 @@
 /** Facts as they go from the server to a form: what `FactsNeeded` asks for, and the answer to it. */
-import type { Facts, IdSource } from "../book/facts.ts";
-import { readSettings } from "../book/settings.ts";
-import { METALS } from "../mass/vector.ts";
+import type { Facts, IdSource } from '../book/facts.ts';
+import { readSettings } from '../book/settings.ts';
+import { METALS } from '../mass/vector.ts';
 import {
   accountJson,
   holdingJson,
@@ -13,15 +13,12 @@ import {
   personJson,
   recordedEntryJson,
   recordedVoucherJson,
-} from "./book.ts";
-import { gramsOrNone, id, percent } from "./primitives.ts";
-import { z } from "./zod.ts";
-import { Decimal } from "../decimal.ts";
+} from './book.ts';
+import { gramsOrNone, id, percent } from './primitives.ts';
+import { z } from './zod.ts';
+import { Decimal } from '../decimal.ts';
 
-const some = z
-  .array(id)
-  .max(500, "That is more than 500 at once. Do it in parts.")
-  .optional();
+const some = z.array(id).max(500, 'That is more than 500 at once. Do it in parts.').optional();
 
 export const factsNeededSchema = z.strictObject({
   account_ids: some,
@@ -39,6 +36,9 @@ export const factsNeededSchema = z.strictObject({
 export const factsJson = z.object({
   today: z.string(),
   closed_through: z.string().nullable(),
+  periods: z.array(
+    z.object({ id: z.string(), first_day: z.string(), last_day: z.string(), closed: z.boolean() }),
+  ),
   lot_serial: z.string(),
   currency: z.string(),
   time_zone: z.string(),
@@ -55,7 +55,7 @@ export const factsJson = z.object({
       place_id: z.string(),
       from_person_id: z.string(),
       to_person_id: z.string(),
-      state: z.enum(["waiting", "acknowledged", "disputed", "settled"]),
+      state: z.enum(['waiting', 'acknowledged', 'disputed', 'settled']),
     }),
   ),
   documents: z.array(z.object({ id: z.string(), sha256: z.string() })),
@@ -94,14 +94,11 @@ export type FactsJson = z.output<typeof factsJson>;
 
 /** The facts of an answer; `ids` makes the ids and codes of what the event opens. */
 export function factsOf(json: FactsJson, ids: IdSource): Facts {
-  const { settings, bin_feeds } = readSettings(
-    json.settings,
-    json.currency,
-    json.time_zone,
-  );
+  const { settings, bin_feeds } = readSettings(json.settings, json.currency, json.time_zone);
   return {
     today: json.today,
     closed_through: json.closed_through,
+    periods: json.periods,
     accounts: byId(json.accounts),
     lots: byId(json.lots),
     holdings: json.holdings,
@@ -125,8 +122,6 @@ export function factsOf(json: FactsJson, ids: IdSource): Facts {
   };
 }
 
-function byId<T extends { readonly id: string }>(
-  rows: readonly T[],
-): ReadonlyMap<string, T> {
+function byId<T extends { readonly id: string }>(rows: readonly T[]): ReadonlyMap<string, T> {
   return new Map(rows.map((row) => [row.id, row]));
 }

@@ -39,10 +39,11 @@ export function factsFor(state: BookState, needed: FactsNeeded): Facts {
   return {
     today: state.today,
     closed_through: state.closed_through,
+    periods: [],
     accounts: accountsOf(state, new Set(accountIds), needed.party_ids ?? []),
     lots,
     holdings,
-    job_holdings: state.allJobHoldings().filter((h) => lotIds.has(h.lot_id) || places.has(h.account_id)),
+    job_holdings: state.allJobHoldings().filter((h) => places.has(h.account_id)),
     vouchers,
     handovers,
     documents: pick(state.documents, needed.document_ids ?? []),
