@@ -65,7 +65,10 @@ export type Outcome<T> =
   { readonly ok: true; readonly value: T } | { readonly ok: false; readonly refusals: readonly Refusal[] };
 
 export const accept = <T>(value: T): Outcome<T> => ({ ok: true, value });
-export const refuse = (...refusals: readonly Refusal[]): Outcome<never> => ({ ok: false, refusals });
+export const refuse = (...refusals: readonly Refusal[]): Outcome<never> => ({
+  ok: false,
+  refusals,
+});
 
 /** The sum of a draft's entries: zero in all five masses where it balances. */
 export function draftSum(entries: readonly EntryDraft[]): MassVector {
