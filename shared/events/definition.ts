@@ -85,3 +85,8 @@ export interface EventDefinition<Input> {
 export function recordsOnly(records: readonly RecordDraft[]): EventDraft {
   return { records, handovers: [], second_signature: null };
 }
+
+/** Whether a word names an event. */
+export function isEventName(name: string): name is EventName {
+  return EVENT_NAMES.some((known) => known === name);
+}

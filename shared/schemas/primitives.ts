@@ -95,3 +95,12 @@ export const optionalNote = z.union([z.literal('').transform(() => null), longTe
 
 /** Files kept with a record, by id. */
 export const documentIds = z.array(id).max(20, 'At most 20 files belong to one voucher.').default([]);
+
+/** The five masses of an answer, as grams in text: for what is shown and not reckoned with. */
+export const massFieldsOut = {
+  gross_g: z.string(),
+  gold_g: z.string(),
+  silver_g: z.string(),
+  platinum_g: z.string(),
+  palladium_g: z.string(),
+};

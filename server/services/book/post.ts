@@ -2,13 +2,13 @@
  * The one way into the book: drafts become lines, and the database's own function numbers, times, hashes and stores
  * them. Nothing else in the program writes a record.
  */
-import type { RecordDraft } from "../../../shared/book/draft.ts";
-import type { HandoverDraft } from "../../../shared/events/definition.ts";
-import { recordLineParts } from "../../../shared/chain/record-line.ts";
-import type { UnchainedRecord } from "../../../shared/chain/record-line.ts";
-import { printGrams } from "../../../shared/mass/micrograms.ts";
-import { z } from "../../../shared/schemas/zod.ts";
-import type { Tx } from "../../db/rows.ts";
+import type { RecordDraft } from '../../../shared/book/draft.ts';
+import type { HandoverDraft } from '../../../shared/events/definition.ts';
+import { recordLineParts } from '../../../shared/chain/record-line.ts';
+import type { UnchainedRecord } from '../../../shared/chain/record-line.ts';
+import { printGrams } from '../../../shared/mass/micrograms.ts';
+import { z } from '../../../shared/schemas/zod.ts';
+import type { Tx } from '../../db/rows.ts';
 
 export const postedRecord = z.object({
   id: z.string(),
@@ -46,21 +46,14 @@ export async function postRecords(
   });
   const { posted } = await tx.one(
     z.object({ posted: z.array(postedRecord) }),
-    "SELECT post_records($1::jsonb, $2::jsonb, $3::timestamptz) AS posted",
-    [
-      JSON.stringify(parts),
-      JSON.stringify(options.handovers ?? []),
-      options.at ?? null,
-    ],
+    'SELECT post_records($1::jsonb, $2::jsonb, $3::timestamptz) AS posted',
+    [JSON.stringify(parts), JSON.stringify(options.handovers ?? []), options.at ?? null],
   );
   return posted;
 }
 
 /** A draft as the chain writes it, but for what only the database gives. */
-export function unchained(
-  draft: RecordDraft,
-  by: Signatories,
-): UnchainedRecord {
+export function unchained(draft: RecordDraft, by: Signatories): UnchainedRecord {
   return {
     id: draft.id,
     kind: draft.kind,
@@ -70,9 +63,9 @@ export function unchained(
     documents: draft.documents.map(({ id, sha256 }) => ({ id, sha256 })),
     recorded_by: by.person_id,
     approved_by: by.approved_by,
-    reverses: draft.type === "voucher" ? draft.reverses : null,
+    reverses: draft.type === 'voucher' ? draft.reverses : null,
     entries:
-      draft.type === "act"
+      draft.type === 'act'
         ? []
         : draft.entries.map((entry, index) => ({
             account_id: entry.account_id,

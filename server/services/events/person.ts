@@ -1,5 +1,5 @@
 /** Somebody signed in, as the services know them. */
-import type { Role } from "../../../shared/permissions.ts";
+import type { Role } from '../../../shared/permissions.ts';
 
 export interface PersonInWorkshop {
   readonly workshop_id: string;

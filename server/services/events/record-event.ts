@@ -3,23 +3,20 @@
  * draft the records, and posts them, all in one transaction. Where a second signature is owed and somebody else can
  * give it, the act waits instead and nothing is posted.
  */
-import { createHash, randomUUID } from "node:crypto";
-import type { Facts } from "../../../shared/book/facts.ts";
-import type { RecordDraft } from "../../../shared/book/draft.ts";
-import type {
-  EventDefinition,
-  EventDraft,
-} from "../../../shared/events/definition.ts";
-import { may } from "../../../shared/permissions.ts";
-import type { EventAnswer } from "../../../shared/schemas/event-answer.ts";
-import { eventAnswer } from "../../../shared/schemas/event-answer.ts";
-import { z } from "../../../shared/schemas/zod.ts";
-import type { Tx } from "../../db/rows.ts";
-import { ProblemError } from "../../problem.ts";
-import { parseFacts } from "../book/facts.ts";
-import { postRecords } from "../book/post.ts";
-import type { PersonInWorkshop } from "./person.ts";
-import { checkBody } from "./check-body.ts";
+import { createHash, randomUUID } from 'node:crypto';
+import type { Facts } from '../../../shared/book/facts.ts';
+import type { RecordDraft } from '../../../shared/book/draft.ts';
+import type { EventDefinition, EventDraft } from '../../../shared/events/definition.ts';
+import { may } from '../../../shared/permissions.ts';
+import type { EventAnswer } from '../../../shared/schemas/event-answer.ts';
+import { eventAnswer } from '../../../shared/schemas/event-answer.ts';
+import { z } from '../../../shared/schemas/zod.ts';
+import type { Tx } from '../../db/rows.ts';
+import { ProblemError } from '../../problem.ts';
+import { parseFacts } from '../book/facts.ts';
+import { postRecords } from '../book/post.ts';
+import type { PersonInWorkshop } from './person.ts';
+import { checkBody } from './check-body.ts';
 
 export interface EventRequest {
   /** The JSON body, as it came. */
@@ -32,14 +29,14 @@ export interface EventRequest {
   readonly at?: Date | null;
 }
 
-const opened = z.discriminatedUnion("state", [
-  z.object({ state: z.literal("new"), facts: z.unknown() }),
+const opened = z.discriminatedUnion('state', [
+  z.object({ state: z.literal('new'), facts: z.unknown() }),
   z.object({
-    state: z.literal("answered"),
+    state: z.literal('answered'),
     status: z.number().nullable(),
     answer: z.unknown(),
   }),
-  z.object({ state: z.literal("other_body") }),
+  z.object({ state: z.literal('other_body') }),
 ]);
 
 /**
@@ -55,15 +52,14 @@ export async function recordEvent<Input>(
   const { open } = await tx.one(z.object({ open: opened }), OPEN, [
     request.key,
     request.by.person_id,
-    createHash("sha256")
+    createHash('sha256')
       .update(`${event.name}\n${JSON.stringify(request.body)}`)
-      .digest("hex"),
+      .digest('hex'),
     JSON.stringify(event.needs(input)),
     request.at ?? null,
   ]);
-  if (open.state === "other_body")
-    throw new ProblemError("key_reused", KEY_REUSED);
-  if (open.state === "answered") {
+  if (open.state === 'other_body') throw new ProblemError('key_reused', KEY_REUSED);
+  if (open.state === 'answered') {
     return {
       status: open.status ?? 201,
       answer: eventAnswer.parse(open.answer),
@@ -77,7 +73,7 @@ export async function recordEvent<Input>(
   if (!outcome.ok) throw ProblemError.ofRefusals(outcome.refusals);
   const result = await postOrWait(tx, event, request, outcome.value, facts);
   await tx.run(
-    "UPDATE request_key SET status = $2, answer = $3::jsonb WHERE workshop_id = current_workshop() AND key = $1",
+    'UPDATE request_key SET status = $2, answer = $3::jsonb WHERE workshop_id = current_workshop() AND key = $1',
     [request.key, result.status, JSON.stringify(result.answer)],
   );
   return result;
@@ -92,34 +88,18 @@ async function postOrWait<Input>(
 ): Promise<{ status: number; answer: EventAnswer }> {
   if (draft.second_signature !== null && request.approved_by === undefined) {
     if (someoneElseMaySign(facts, request.by.person_id)) {
-      const id = await waitForSignature(
-        tx,
-        event.name,
-        request,
-        draft,
-        draft.second_signature,
-      );
+      const id = await waitForSignature(tx, event.name, request, draft, draft.second_signature);
       return {
         status: 202,
         answer: { records: [], lots: [], signature_request_id: id },
       };
     }
-    return post(
-      tx,
-      request,
-      { ...draft, records: draft.records.map(singleHanded) },
-      request.by.person_id,
-    );
+    return post(tx, request, { ...draft, records: draft.records.map(singleHanded) }, request.by.person_id);
   }
   return post(tx, request, draft, request.approved_by ?? null);
 }
 
-async function post(
-  tx: Tx,
-  request: EventRequest,
-  draft: EventDraft,
-  approved_by: string | null,
-) {
+async function post(tx: Tx, request: EventRequest, draft: EventDraft, approved_by: string | null) {
   const records = await postRecords(
     tx,
     draft.records,
@@ -138,24 +118,19 @@ async function post(
 
 function someoneElseMaySign(facts: Facts, person_id: string): boolean {
   return [...facts.people.values()].some(
-    (person) =>
-      person.active &&
-      person.id !== person_id &&
-      may(person.role, "signature.give"),
+    (person) => person.active && person.id !== person_id && may(person.role, 'signature.give'),
   );
 }
 
 /** Marks a record that one person alone could sign, wherever it will be shown. */
 function singleHanded(record: RecordDraft): RecordDraft {
-  return { ...record, detail: { ...record.detail, single_handed: "yes" } };
+  return { ...record, detail: { ...record.detail, single_handed: 'yes' } };
 }
 
 function lotsOf(records: readonly RecordDraft[]) {
   return records
-    .filter((record) => record.kind === "lot_described")
-    .map(({ detail }) =>
-      lotNamed.parse({ id: detail["lot_id"], code: detail["code"] }),
-    );
+    .filter((record) => record.kind === 'lot_described')
+    .map(({ detail }) => lotNamed.parse({ id: detail['lot_id'], code: detail['code'] }));
 }
 
 async function waitForSignature(
@@ -170,9 +145,7 @@ async function waitForSignature(
     id,
     name,
     JSON.stringify(request.body),
-    JSON.stringify(draft, (_, value: unknown) =>
-      typeof value === "bigint" ? value.toString() : value,
-    ),
+    JSON.stringify(presentDrafts(draft.records)),
     reason,
     request.by.person_id,
   ]);
@@ -181,11 +154,10 @@ async function waitForSignature(
 
 const lotNamed = z.object({ id: z.string(), code: z.string() });
 
-const OPEN =
-  "SELECT open_event($1, $2::uuid, $3, $4::jsonb, $5::timestamptz) AS open";
+const OPEN = 'SELECT open_event($1, $2::uuid, $3, $4::jsonb, $5::timestamptz) AS open';
 
 const ASK = `INSERT INTO signature_request (workshop_id, id, event, input, preview, reason, requested_by)
   VALUES (current_workshop(), $1::uuid, $2, $3::jsonb, $4::jsonb, $5, $6::uuid)`;
 
 const KEY_REUSED =
-  "This request was sent before with other figures, and those are in the book. Look at the voucher; enter what is missing as a new one.";
+  'This request was sent before with other figures, and those are in the book. Look at the voucher; enter what is missing as a new one.';
