@@ -81,7 +81,7 @@ export const masterData: Migration = {
       place_id       uuid NOT NULL,
       from_person_id uuid NOT NULL,
       to_person_id   uuid NOT NULL,
-      state          text NOT NULL DEFAULT 'waiting' CHECK (state IN ('waiting', 'acknowledged', 'disputed', 'settled')),
+      state          text NOT NULL DEFAULT 'waiting' CHECK (state IN ('waiting', 'acknowledged', 'disputed')),
       answered_at    timestamptz,
       answered_gross_ug bigint,
       answer_note    text,

@@ -55,7 +55,7 @@ export const factsJson = z.object({
       place_id: z.string(),
       from_person_id: z.string(),
       to_person_id: z.string(),
-      state: z.enum(['waiting', 'acknowledged', 'disputed', 'settled']),
+      state: z.enum(['waiting', 'acknowledged', 'disputed']),
     }),
   ),
   documents: z.array(z.object({ id: z.string(), sha256: z.string() })),

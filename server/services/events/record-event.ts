@@ -12,6 +12,7 @@ import type { EventAnswer } from '../../../shared/schemas/event-answer.ts';
 import { eventAnswer } from '../../../shared/schemas/event-answer.ts';
 import { z } from '../../../shared/schemas/zod.ts';
 import type { Tx } from '../../db/rows.ts';
+import { presentDrafts } from '../../presenters/draft-preview.ts';
 import { ProblemError } from '../../problem.ts';
 import { parseFacts } from '../book/facts.ts';
 import { postRecords } from '../book/post.ts';
