@@ -21,6 +21,7 @@ export const readFacts: Migration = {
       SELECT jsonb_build_object('voucher_id', id, 'voucher_sequence', e.voucher_sequence::text, 'voucher_kind', kind,
         'business_date', e.business_date::text, 'line', e.line::text, 'operation', operation, 'bench', bench,
         'account_id', e.account_id, 'lot_id', e.lot_id, ${masses('e')}, 'pieces', e.pieces::text,
+        'corrects', (SELECT c.detail->>'corrects' FROM record c WHERE c.workshop_id = e.workshop_id AND c.id = entry_json.id),
         'reversed_by', (SELECT v.id FROM record v WHERE v.workshop_id = e.workshop_id AND v.reverses = entry_json.id)) $$;
 
     -- Loss booked by what feeds a bin, since that bin was last swept up; never the loss account's balance.

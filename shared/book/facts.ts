@@ -64,6 +64,8 @@ export interface RecordedEntry extends Holding {
   readonly bench: string | null;
   /** The voucher that reversed the one this entry belongs to, if any. */
   readonly reversed_by: string | null;
+  /** The voucher that the one this entry belongs to corrects, if any. */
+  readonly corrects: string | null;
 }
 
 /** A handover that a voucher made, as it stands. */

@@ -101,6 +101,7 @@ export const recordedEntryJson = z
     voucher_id: z.string(),
     voucher_sequence: z.string(),
     voucher_kind: recordKind,
+    corrects: z.string().nullable(),
     business_date: z.string(),
     line: z.string(),
     operation: z.string().nullable(),

@@ -109,6 +109,7 @@ function entriesOf(state: BookState, posted: Posted, voucher: VoucherDraft): rea
     operation: detailLeaf(voucher.detail, 'operation'),
     bench: detailLeaf(voucher.detail, 'bench'),
     reversed_by: reversedBy(state, voucher.id),
+    corrects: detailLeaf(voucher.detail, 'corrects'),
   }));
 }
 

@@ -65,7 +65,7 @@ export class BookState {
 
   readonly ids: IdSource = {
     id: () => this.newId(),
-    lotCode: (letter) => makeLotCode(letter, 26, (this.#lotSerial += 1)),
+    lotCode: (letter) => makeLotCode(letter, '26', BigInt((this.#lotSerial += 1))),
   };
 
   newId(): string {
