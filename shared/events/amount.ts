@@ -15,7 +15,7 @@ import { apportion, takeGross } from '../mass/apportion.ts';
 import type { Micrograms } from '../mass/micrograms.ts';
 import { printGrams } from '../mass/micrograms.ts';
 import type { MassVector } from '../mass/vector.ts';
-import { MASS_KEYS, ZERO_MASS, isZeroMass, subtractMass } from '../mass/vector.ts';
+import { MASS_KEYS, ZERO_MASS, hasNegative, isZeroMass, subtractMass } from '../mass/vector.ts';
 import { gramsAboveZero, pieces } from '../schemas/primitives.ts';
 import { z } from '../schemas/zod.ts';
 import type { Weighing } from '../weighing/weighing.ts';
@@ -83,7 +83,8 @@ export function availableOf(facts: Facts, from: DrawnFrom): Holding {
 /** Reckons what an amount takes. Refuses what is not there, a count that does not fit, and an impossible weighing. */
 export function drawAmount(facts: Facts, from: DrawnFrom, amount: Amount, field: string): Outcome<Drawn> {
   const available = availableOf(facts, from);
-  if (isZeroMass(available.mass) && (available.pieces ?? 0n) === 0n) return nothingThere(from, field);
+  const empty = isZeroMass(available.mass) && (available.pieces ?? 0n) === 0n;
+  if (empty || hasNegative(available.mass)) return nothingThere(from, field);
   const blank = { lot: from.lot, weighing: null, by_count: false, last: null };
   switch (amount.how) {
     case 'all':
@@ -108,7 +109,12 @@ export function drawAmount(facts: Facts, from: DrawnFrom, amount: Amount, field:
  * Entries for what was drawn: from the place, to where it goes, and what differs at an emptied container to count
  * variance.
  */
-export function drawnEntries(drawn: Drawn, from_id: string, to_id: string, variance_id: string): readonly EntryDraft[] {
+export function drawnEntries(
+  drawn: Drawn,
+  from_id: string,
+  to_id: string,
+  variance_id: string,
+): readonly EntryDraft[] {
   const lot_id = drawn.lot.id;
   const moved = moveEntries({ lot_id, mass: drawn.mass, pieces: drawn.pieces }, from_id, to_id);
   if (drawn.last === null) return moved;
@@ -134,7 +140,11 @@ export function remainderToSign(drawn: Drawn, place: Account): string | null {
 }
 
 function nothingThere(from: DrawnFrom, field: string): Outcome<never> {
-  const forJob = isWorkPlace(from.account.kind) ? (from.job_id === null ? ' as stock work' : ' for this job') : '';
+  const forJob = isWorkPlace(from.account.kind)
+    ? from.job_id === null
+      ? ' as stock work'
+      : ' for this job'
+    : '';
   const sentence = `${from.account.name} holds nothing of ${from.lot.code}${forJob}. Look at the label and the place again.`;
   return refuse({ code: 'not_enough', field, sentence });
 }
@@ -189,7 +199,12 @@ function byCount(from: DrawnFrom, available: Holding, count: bigint, field: stri
 function emptied(
   facts: Facts,
   available: Holding,
-  asked: { readonly gross: Micrograms; readonly pieces: bigint | null; readonly weighing: Weighing; readonly lot: Lot },
+  asked: {
+    readonly gross: Micrograms;
+    readonly pieces: bigint | null;
+    readonly weighing: Weighing;
+    readonly lot: Lot;
+  },
   field: string,
 ): Outcome<Drawn> {
   const by = { readings: readingsOf(asked.weighing), weighing_u_ug: facts.settings.weighing_u_ug };

@@ -25,7 +25,11 @@ export interface Common {
 }
 
 /** Files by id. Refuses one that was never uploaded. */
-export function documentsOf(ids: readonly string[], facts: Facts, field: string): Outcome<readonly DocumentRef[]> {
+export function documentsOf(
+  ids: readonly string[],
+  facts: Facts,
+  field: string,
+): Outcome<readonly DocumentRef[]> {
   const found: DocumentRef[] = [];
   for (const id of new Set(ids)) {
     const known = facts.documents.get(id);

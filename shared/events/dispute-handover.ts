@@ -34,7 +34,9 @@ export const disputeHandover: EventDefinition<DisputeHandoverInput> = {
     const net = netOf(input.weighing, 'weighing');
     if (!net.ok) return net;
     const entries = facts.vouchers.get(input.voucher_id)?.entries ?? [];
-    const there = entries.filter((entry) => entry.account_id === handover.value.place_id && entry.mass.gross > 0n);
+    const there = entries.filter(
+      (entry) => entry.account_id === handover.value.place_id && entry.mass.gross > 0n,
+    );
     const booked = sumMass(there.map((entry) => entry.mass)).gross;
     if (booked === net.value) {
       const sentence = `The book says ${printGrams(booked, 3)} g too, so there is nothing to dispute. Acknowledge it.`;

@@ -47,7 +47,11 @@ export function findHandover(
   }
   const name = facts.people.get(handover.to_person_id)?.name ?? 'The receiver';
   if (!wanted.includes(handover.state)) {
-    return refuse({ code: 'already_done', field: 'voucher_id', sentence: answered(name, handover.state, voucher.value.sequence) });
+    return refuse({
+      code: 'already_done',
+      field: 'voucher_id',
+      sentence: answered(name, handover.state, voucher.value.sequence),
+    });
   }
   const own = actor.person_id === handover.to_person_id;
   const atCounter = answer.how === 'pin' && answer.pin !== null && may(actor.role, 'book.issue');
@@ -58,7 +62,8 @@ export function findHandover(
 
 function answered(name: string, state: Handover['state'], sequence: string): string {
   if (state === 'waiting') return `${name} has not answered voucher ${sequence} yet. Nothing is in dispute.`;
-  if (state === 'disputed') return `${name} disputes voucher ${sequence}. Settle it by a second weighing before both.`;
+  if (state === 'disputed')
+    return `${name} disputes voucher ${sequence}. Settle it by a second weighing before both.`;
   return `${name} has acknowledged voucher ${sequence} already. A mistake found later is mended by a correction.`;
 }
 

@@ -40,6 +40,8 @@ export const hold: EventDefinition<HoldInput> = {
       return refuse({ code: 'invalid', field: 'until', sentence });
     }
     const detail = { lot_id: lot.value.id, reason: input.reason, until: input.until };
-    return accept(recordsOnly([{ type: 'act', id: facts.ids.id(), kind: 'lot_held', ...common.value, detail }]));
+    return accept(
+      recordsOnly([{ type: 'act', id: facts.ids.id(), kind: 'lot_held', ...common.value, detail }]),
+    );
   },
 };

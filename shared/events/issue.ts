@@ -30,7 +30,10 @@ const issueSchema = z.strictObject({
 });
 export type IssueInput = z.output<typeof issueSchema>;
 
-const SAFES = { of: ['safe'], sentence: 'metal is issued from a safe. Use a transfer between other places.' } as const;
+const SAFES = {
+  of: ['safe'],
+  sentence: 'metal is issued from a safe. Use a transfer between other places.',
+} as const;
 const WORK = {
   of: WORK_KINDS,
   sentence: 'metal is issued to a bench, a station or an outworker. Use a transfer between other places.',
@@ -82,7 +85,12 @@ export const issue: EventDefinition<IssueInput> = {
     const place_id = to.value.id;
     return accept({
       records: [voucher],
-      handovers: handoverOf(facts, { voucher_id: voucher.id, place_id, giver_id, receiver_id: receiver.value }),
+      handovers: handoverOf(facts, {
+        voucher_id: voucher.id,
+        place_id,
+        giver_id,
+        receiver_id: receiver.value,
+      }),
       second_signature: remainderToSign(drawn.value, from.value),
     });
   },

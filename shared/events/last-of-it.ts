@@ -4,12 +4,10 @@
  * limit of error of the weighings (two standard uncertainties, JCGM 100) one signature does.
  */
 import { Decimal } from '../decimal.ts';
-import { massFromFineness } from '../mass/apportion.ts';
-import { takeGross } from '../mass/apportion.ts';
-import { finenessOf } from '../alloy/fineness.ts';
+import { apportion, takeGross } from '../mass/apportion.ts';
 import type { Micrograms } from '../mass/micrograms.ts';
 import type { MassVector } from '../mass/vector.ts';
-import { addMass, subtractMass } from '../mass/vector.ts';
+import { METALS, addMass, fineTotal, subtractMass } from '../mass/vector.ts';
 import type { Weighing } from '../weighing/weighing.ts';
 
 export interface LastOfIt {
@@ -42,7 +40,8 @@ export function lastOfIt(
   weighed: Micrograms,
   by: { readonly readings: bigint; readonly weighing_u_ug: Micrograms },
 ): LastOfIt {
-  const moved = weighed <= holding.gross ? takeGross(holding, weighed) : withMore(holding, weighed - holding.gross);
+  const moved =
+    weighed <= holding.gross ? takeGross(holding, weighed) : withMore(holding, weighed - holding.gross);
   const remainder = subtractMass(holding, moved);
   const limit_ug = limitOfReadings(by.readings, by.weighing_u_ug);
   const off = remainder.gross < 0n ? -remainder.gross : remainder.gross;
@@ -50,7 +49,8 @@ export function lastOfIt(
 }
 
 function withMore(holding: MassVector, extra: Micrograms): MassVector {
-  const fineness = finenessOf(holding);
-  if (fineness === null) throw new Error('An empty holding has no last of it.');
-  return addMass(holding, massFromFineness(extra, fineness));
+  const metals = METALS.map((metal) => holding[metal]);
+  const rest = holding.gross - fineTotal(holding);
+  const [gold = 0n, silver = 0n, platinum = 0n, palladium = 0n] = apportion(extra, [...metals, rest]);
+  return addMass(holding, { gross: extra, gold, silver, platinum, palladium });
 }

@@ -61,13 +61,21 @@ export function findJob(facts: Facts, job_id: string | null, field: string): Out
   if (job_id === null) return accept(null);
   const job = facts.jobs.get(job_id);
   if (job !== undefined) return accept(job);
-  return refuse({ code: 'not_found', field, sentence: 'That job is not in the book. Choose one from the list.' });
+  return refuse({
+    code: 'not_found',
+    field,
+    sentence: 'That job is not in the book. Choose one from the list.',
+  });
 }
 
 export function findVoucher(facts: Facts, voucher_id: string, field: string): Outcome<RecordedVoucher> {
   const voucher = facts.vouchers.get(voucher_id);
   if (voucher !== undefined) return accept(voucher);
-  return refuse({ code: 'not_found', field, sentence: 'No voucher has that number. Look at the register again.' });
+  return refuse({
+    code: 'not_found',
+    field,
+    sentence: 'No voucher has that number. Look at the register again.',
+  });
 }
 
 /** The account of a kind that belongs to a party. Refuses where the party has none. */
@@ -82,9 +90,11 @@ export function partyAccount(facts: Facts, party: Party, kind: AccountKind, fiel
 /** The working-loss account of an operation. Refuses an operation that the workshop does not keep. */
 export function lossAccount(facts: Facts, operation: string, field: string): Outcome<Account> {
   for (const account of facts.accounts.values()) {
-    if (account.kind === 'working_loss' && account.operation === operation && !account.closed) return accept(account);
+    if (account.kind === 'working_loss' && account.operation === operation && !account.closed)
+      return accept(account);
   }
-  const sentence = 'The workshop keeps no such operation. Choose one from the list, or add it under Workshop.';
+  const sentence =
+    'The workshop keeps no such operation. Choose one from the list, or add it under Workshop.';
   return refuse({ code: 'not_found', field, sentence });
 }
 

@@ -50,7 +50,8 @@ export function newLotFineness(line: NewLotInput, field: string): Outcome<Finene
   }
   const isKnown = Object.values(given).some((value) => value.gt(0));
   if (line.basis === 'unknown' && isKnown) {
-    const sentence = 'A fineness is given, though its basis says unknown. Choose how it is known, or leave the fineness empty.';
+    const sentence =
+      'A fineness is given, though its basis says unknown. Choose how it is known, or leave the fineness empty.';
     return refuse({ code: 'impossible_fineness', field: at, sentence });
   }
   if (line.form === 'account') {
@@ -86,6 +87,9 @@ export interface OpenedLot {
   readonly code: string;
 }
 
+/** Finenesses are described to a ten-thousandth of a per mille, rounded down so that they stay possible. */
+const DESCRIBED_DECIMALS = 4;
+
 /** Gives a lot an id and the next free code, and drafts the act that describes it. */
 export function openLot(
   facts: Facts,
@@ -93,8 +97,19 @@ export function openLot(
   lot: Omit<LotDescription, 'lot_id' | 'code'>,
 ): OpenedLot {
   const lot_id = facts.ids.id();
+  const down = (value: Decimal) => value.toDecimalPlaces(DESCRIBED_DECIMALS, Decimal.ROUND_DOWN);
+  const fineness = {
+    gold: down(lot.fineness.gold),
+    silver: down(lot.fineness.silver),
+    platinum: down(lot.fineness.platinum),
+    palladium: down(lot.fineness.palladium),
+  };
   const code = facts.ids.lotCode(codeLetter(lot.form, lot.fineness));
-  return { act: describeLot({ ...lot, lot_id, code }, facts.ids.id(), business_date), lot_id, code };
+  return {
+    act: describeLot({ ...lot, fineness, lot_id, code }, facts.ids.id(), business_date),
+    lot_id,
+    code,
+  };
 }
 
 /** The fineness described at a lot's opening, in per mille. */

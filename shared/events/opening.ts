@@ -40,14 +40,16 @@ export const opening: EventDefinition<OpeningInput> = {
   action: 'book.opening',
   summary: 'Enters what was counted when the book began.',
   needs: (input) => ({
-    account_ids: input.lines.map((line) => line.place_id),
-    party_ids: input.lines.flatMap((line) => line.owner_id ?? []),
+    account_ids: [...new Set(input.lines.map((line) => line.place_id))],
+    party_ids: [...new Set(input.lines.flatMap((line) => line.owner_id ?? []))],
     document_ids: input.document_ids,
   }),
   draft(input, facts, actor) {
     const common = readCommon(input, facts);
     if (!common.ok) return common;
-    const lines = allOf(input.lines.map((line, index) => openLine(line, `lines.${index}`, facts, common.value)));
+    const lines = allOf(
+      input.lines.map((line, index) => openLine(line, `lines.${index}`, facts, common.value)),
+    );
     if (!lines.ok) return lines;
     const weighings = input.lines.map((line, index) => ({ weighing: line.weighing, line: index + 1 }));
     const voucher = makeVoucher(facts, common.value, {

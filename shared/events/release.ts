@@ -31,6 +31,8 @@ export const release: EventDefinition<ReleaseInput> = {
       return refuse({ code: 'lot_on_hold', field: 'lot_id', sentence });
     }
     const detail = { lot_id: lot.value.id, reason: input.reason };
-    return accept(recordsOnly([{ type: 'act', id: facts.ids.id(), kind: 'lot_released', ...common.value, detail }]));
+    return accept(
+      recordsOnly([{ type: 'act', id: facts.ids.id(), kind: 'lot_released', ...common.value, detail }]),
+    );
   },
 };

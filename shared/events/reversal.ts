@@ -84,7 +84,9 @@ function canBeReversed(voucher: RecordedVoucher, date: string, facts: Facts): Ou
 
 /** Sequences of later vouchers that took from where this one put something, but for those that were reversed. */
 function usedSince(voucher: RecordedVoucher, facts: Facts): readonly string[] {
-  const put = voucher.entries.filter((entry) => isIn(entry.account_id, facts) && someMass(entry.mass, (ug) => ug > 0n));
+  const put = voucher.entries.filter(
+    (entry) => isIn(entry.account_id, facts) && someMass(entry.mass, (ug) => ug > 0n),
+  );
   const later = facts.lot_entries.filter(
     (entry) =>
       BigInt(entry.voucher_sequence) > BigInt(voucher.sequence) &&

@@ -49,7 +49,9 @@ export const settleDispute: EventDefinition<SettleDisputeInput> = {
     if (!voucher.ok) return voucher;
     const once = eachLotOnce(input.lines, facts, 'lines');
     if (!once.ok) return once;
-    const lines = allOf(input.lines.map((line, at) => mend(line, `lines.${at}`, voucher.value, handover.value, facts)));
+    const lines = allOf(
+      input.lines.map((line, at) => mend(line, `lines.${at}`, voucher.value, handover.value, facts)),
+    );
     if (!lines.ok) return lines;
     const weighings = input.lines.map((line, at) => ({ weighing: line.weighing, line: at + 1 }));
     const common = { business_date: facts.today, note: input.note, documents: [] };
@@ -74,8 +76,14 @@ export const settleDispute: EventDefinition<SettleDisputeInput> = {
   },
 };
 
-function agreedGross(voucher: RecordedVoucher, handover: Handover, mended: readonly EntryDraft[]): Micrograms {
-  const before = voucher.entries.filter((entry) => entry.account_id === handover.place_id && entry.mass.gross > 0n);
+function agreedGross(
+  voucher: RecordedVoucher,
+  handover: Handover,
+  mended: readonly EntryDraft[],
+): Micrograms {
+  const before = voucher.entries.filter(
+    (entry) => entry.account_id === handover.place_id && entry.mass.gross > 0n,
+  );
   const after = mended.filter((entry) => entry.account_id === handover.place_id);
   return sumMass([...before, ...after].map((entry) => entry.mass)).gross;
 }
@@ -120,7 +128,8 @@ function sidesOf(
     .filter((entry) => entry.mass.gross < 0n)
     .map((entry) => facts.accounts.get(entry.account_id))
     .find((account) => account !== undefined && isPlace(account.kind));
-  if (booked !== undefined && receiver !== undefined && giver !== undefined) return accept({ booked, giver, receiver });
+  if (booked !== undefined && receiver !== undefined && giver !== undefined)
+    return accept({ booked, giver, receiver });
   const code = facts.lots.get(lot_id)?.code ?? 'That lot';
   const sentence = `${code} was not handed over from one place to the other in voucher ${voucher.sequence}. Mend that voucher by a correction.`;
   return refuse({ code: 'invalid', field: `${field}.lot_id`, sentence });

@@ -84,10 +84,16 @@ export const transfer: EventDefinition<TransferInput> = {
       if (!lines.ok) return lines;
       const voucher = transferVoucher(load, lines.value, way.value, { input, facts, actor });
       const giver_id = way.value.from.custodian_id ?? actor.person_id;
-      const of = { voucher_id: voucher.id, place_id: way.value.to.id, giver_id, receiver_id: way.value.receiver_id };
+      const of = {
+        voucher_id: voucher.id,
+        place_id: way.value.to.id,
+        giver_id,
+        receiver_id: way.value.receiver_id,
+      };
       vouchers.push(voucher);
       handovers.push(...handoverOf(facts, of));
-      second_signature ??= lines.value.map((line) => remainderToSign(line, way.value.from)).find((s) => s !== null) ?? null;
+      second_signature ??=
+        lines.value.map((line) => remainderToSign(line, way.value.from)).find((s) => s !== null) ?? null;
     }
     return accept({ records: vouchers, handovers, second_signature });
   },
@@ -108,7 +114,8 @@ function findWay(input: TransferInput, facts: Facts): Outcome<Way> {
     const sentence = `${to.value.name} gets its metal by an issue, for a job and an operation. Issue it instead.`;
     return refuse({ code: 'wrong_place', field: 'to_id', sentence });
   }
-  const operation = input.operation === null ? accept(null) : lossAccount(facts, input.operation, 'operation');
+  const operation =
+    input.operation === null ? accept(null) : lossAccount(facts, input.operation, 'operation');
   if (!operation.ok) return operation;
   const job = findJob(facts, input.job_id, 'job_id');
   if (!job.ok) return job;
@@ -150,12 +157,22 @@ function everythingAt(from: Account, facts: Facts): Outcome<readonly Load[]> {
   );
 }
 
-function drawLine(line: Load['lines'][number], job_id: string | null, way: Way, facts: Facts): Outcome<Drawn> {
+function drawLine(
+  line: Load['lines'][number],
+  job_id: string | null,
+  way: Way,
+  facts: Facts,
+): Outcome<Drawn> {
   const lot = findLot(facts, line.lot_id, `${line.field}.lot_id`);
   if (!lot.ok) return lot;
   const usable = isWorkPlace(way.to.kind) ? usableLot(lot.value, `${line.field}.lot_id`) : lot;
   if (!usable.ok) return usable;
-  return drawAmount(facts, { account: way.from, lot: lot.value, job_id }, line.amount, `${line.field}.amount`);
+  return drawAmount(
+    facts,
+    { account: way.from, lot: lot.value, job_id },
+    line.amount,
+    `${line.field}.amount`,
+  );
 }
 
 function transferVoucher(
@@ -166,7 +183,9 @@ function transferVoucher(
 ): VoucherDraft {
   const { input, facts, actor } = by;
   const variance = theAccount(facts, 'count_variance').id;
-  const entries: readonly EntryDraft[] = lines.flatMap((line) => drawnEntries(line, way.from.id, way.to.id, variance));
+  const entries: readonly EntryDraft[] = lines.flatMap((line) =>
+    drawnEntries(line, way.from.id, way.to.id, variance),
+  );
   const weighings = lines.map((line, index) => ({ weighing: line.weighing, line: index + 1 }));
   return makeVoucher(facts, way.common, {
     kind: 'transfer',
@@ -175,7 +194,8 @@ function transferVoucher(
       bench: isWorkPlace(way.to.kind) ? way.to.id : null,
       person_id: way.receiver_id,
       job_id: load.job_id,
-      single_handed: way.receiver_id === actor.person_id && way.from.custodian_id !== actor.person_id ? 'yes' : null,
+      single_handed:
+        way.receiver_id === actor.person_id && way.from.custodian_id !== actor.person_id ? 'yes' : null,
       weighings: weighingRows(weighings, facts, actor),
     },
     entries,

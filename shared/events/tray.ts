@@ -43,8 +43,10 @@ function whyNot(lot: Lot, joining: Joining, facts: Facts): string | null {
   if (!TRAY_FORMS.includes(lot.form) || lot.form !== joining.form) {
     return `${lot.code} is no tray of that form, so nothing can join it.`;
   }
-  if (lot.owner_id !== joining.owner_id) return `${lot.code} has another owner. Metal of two owners is never in one lot.`;
-  if (lot.alloy !== joining.alloy) return `${lot.code} is ${lot.alloy ?? 'of no alloy'}, and a tray is of one alloy.`;
+  if (lot.owner_id !== joining.owner_id)
+    return `${lot.code} has another owner. Metal of two owners is never in one lot.`;
+  if (lot.alloy !== joining.alloy)
+    return `${lot.code} is ${lot.alloy ?? 'of no alloy'}, and a tray is of one alloy.`;
   if (lot.origin !== joining.origin) return `${lot.code} is of another origin, and a tray is of one origin.`;
   if ((lot.basis === 'unknown') !== (joining.basis === 'unknown')) {
     return `The fineness of one is known and of the other not, so ${lot.code} can’t take it.`;
@@ -54,5 +56,7 @@ function whyNot(lot: Lot, joining: Joining, facts: Facts): string | null {
     const account = facts.accounts.get(h.account_id);
     return account !== undefined && isPlace(account.kind) && account.id !== joining.place.id;
   });
-  return elsewhere === undefined ? null : `${lot.code} lies in another place too, and a tray is in one place.`;
+  return elsewhere === undefined
+    ? null
+    : `${lot.code} lies in another place too, and a tray is in one place.`;
 }

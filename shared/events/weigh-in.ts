@@ -84,26 +84,37 @@ export const weighIn: EventDefinition<WeighInInput> = {
     if (!delivery.ok) return delivery;
     const trays = eachTrayOnce(input);
     if (!trays.ok) return trays;
-    const lines = allOf(input.lines.map((line, index) => receive(line, `lines.${index}`, delivery.value, facts)));
+    const lines = allOf(
+      input.lines.map((line, index) => receive(line, `lines.${index}`, delivery.value, facts)),
+    );
     if (!lines.ok) return lines;
     if (lines.value.every((line) => line.entries.length === 0)) {
-      const sentence = 'Every line is sent back, so nothing enters the book. Send the parcel back with its delivery note.';
+      const sentence =
+        'Every line is sent back, so nothing enters the book. Send the parcel back with its delivery note.';
       return refuse({ code: 'nothing_to_post', field: 'lines', sentence });
     }
     const { common, party } = delivery.value;
     const weighings = input.lines.map((line, index) => ({ weighing: line.weighing, line: index + 1 }));
     const certificates = lines.value.flatMap((line) => line.documents);
-    const documents = [...new Map([...common.documents, ...certificates].map((file) => [file.id, file])).values()];
-    const voucher = makeVoucher(facts, { ...common, documents }, {
-      kind: 'weigh_in',
-      detail: {
-        counterparty_id: party.id,
-        delivery_note: input.delivery_note,
-        lines: lines.value.map((line, index) => lineDetail(line, input.lines[index]?.decision ?? null, index + 1)),
-        weighings: weighingRows(weighings, facts, actor),
+    const documents = [
+      ...new Map([...common.documents, ...certificates].map((file) => [file.id, file])).values(),
+    ];
+    const voucher = makeVoucher(
+      facts,
+      { ...common, documents },
+      {
+        kind: 'weigh_in',
+        detail: {
+          counterparty_id: party.id,
+          delivery_note: input.delivery_note,
+          lines: lines.value.map((line, index) =>
+            lineDetail(line, input.lines[index]?.decision ?? null, index + 1),
+          ),
+          weighings: weighingRows(weighings, facts, actor),
+        },
+        entries: lines.value.flatMap((line) => line.entries),
       },
-      entries: lines.value.flatMap((line) => line.entries),
-    });
+    );
     return accept(recordsOnly([...lines.value.flatMap((line) => line.act ?? []), voucher]));
   },
 };

@@ -142,7 +142,7 @@ export class Book {
       },
       { account_id: at.to, lot_id, mass, pieces },
     ];
-    const detail = at.job_id === undefined || at.job_id === null ? {} : { job_id: at.job_id };
+    const detail = { job_id: at.job_id ?? null };
     this.state.post([{ ...this.#blankVoucher(), detail, entries }], null);
   }
 
