@@ -15,7 +15,7 @@ import type { Lot, LotForm } from './lot.ts';
 /**
  * What an event asks to be read before it can be drafted. Result accounts, sold, opening stock, people and settings
  * are always read; so is every account, lot and party that something else read here names (a holding's account and
- * lot, a lot's owner, a job's customer).
+ * lot, a lot's owner, a job's customer), and every account of a party, owner or customer among them.
  */
 export interface FactsNeeded {
   readonly account_ids?: readonly string[];

@@ -25,22 +25,24 @@ export function factsFor(state: BookState, needed: FactsNeeded): Facts {
   const jobs = pick(state.jobs, needed.job_ids ?? []);
   const lots = pick(state.lots, [...lotIds, ...history, ...named.map((row) => row.lot_id)]);
   const owners = [...lots.values()].flatMap((lot) => lot.owner_id ?? []);
-  const parties = pick(state.parties, [
+  const partyIds = [
     ...(needed.party_ids ?? []),
     ...owners,
     ...[...jobs.values()].flatMap((job) => job.customer_id ?? []),
-  ]);
+  ];
   const accountIds = [
     ...(needed.account_ids ?? []),
     ...places,
     ...named.map((row) => row.account_id),
     ...handovers.map((handover) => handover.place_id),
   ];
+  const accounts = accountsOf(state, new Set(accountIds), partyIds);
+  const partiesOfAccounts = accountIds.flatMap((id) => accounts.get(id)?.party_id ?? []);
   return {
     today: state.today,
     closed_through: state.closed_through,
     periods: [],
-    accounts: accountsOf(state, new Set(accountIds), needed.party_ids ?? []),
+    accounts,
     lots,
     holdings,
     job_holdings: state.allJobHoldings().filter((h) => places.has(h.account_id)),
@@ -48,7 +50,7 @@ export function factsFor(state: BookState, needed: FactsNeeded): Facts {
     handovers,
     documents: pick(state.documents, needed.document_ids ?? []),
     lot_entries,
-    parties,
+    parties: pick(state.parties, [...partyIds, ...partiesOfAccounts]),
     jobs,
     people: state.people,
     allowances: state.allowances,

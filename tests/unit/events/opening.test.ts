@@ -14,7 +14,13 @@ const sheet = {
 describe('opening', () => {
   it('brings what was counted out of opening stock into each place', () => {
     const { book, mara, safe, bench2 } = aWorkshop();
-    const wire = { ...sheet, form: 'wire', description: '585 wire', gold_permille: '585', silver_permille: '0' };
+    const wire = {
+      ...sheet,
+      form: 'wire',
+      description: '585 wire',
+      gold_permille: '585',
+      silver_permille: '0',
+    };
     const lines = [
       { ...sheet, place_id: safe },
       { ...wire, place_id: bench2, weighing: { gross_g: '12.500', tare_g: '2.500', tare_kind: 'measured' } },
@@ -63,13 +69,19 @@ describe('opening', () => {
   it('wants pieces for metal that is counted, and none for other metal', () => {
     const { book, mara, safe } = aWorkshop();
     const findings = { ...sheet, form: 'findings', place_id: safe };
-    const refusals = book.refusals(opening, { lines: [findings, { ...sheet, place_id: safe, pieces: '3' }] }, mara);
+    const refusals = book.refusals(
+      opening,
+      { lines: [findings, { ...sheet, place_id: safe, pieces: '3' }] },
+      mara,
+    );
     expect(refusals.map(({ code, field }) => [code, field])).toEqual([
       ['pieces_needed', 'lines.0.pieces'],
       ['pieces_needed', 'lines.1.pieces'],
     ]);
     book.run(opening, { lines: [{ ...findings, pieces: '40' }] }, mara);
-    expect(book.ledger('places')).toEqual(['Safe | 750 yellow sheet | 100.000 g | gold 75.000 | silver 12.500 | 40 pieces']);
+    expect(book.ledger('places')).toEqual([
+      'Safe | 750 yellow sheet | 100.000 g | gold 75.000 | silver 12.500 | 40 pieces',
+    ]);
   });
 
   it('refuses a closed place, an account that is no place, and an owner who is not a party', () => {

@@ -84,24 +84,37 @@ describe('weigh-in', () => {
     const certificate = book.document();
     const lines = [grain, { ...grain, certificate_ids: [certificate] }];
     book.run(weighIn, { party_id: supplier, safe_id: safe, lines }, mara);
-    expect(book.newestLot(1).hold_reason).toBe('its certificate is not recorded yet; its melt check is not recorded yet');
+    expect(book.newestLot(1).hold_reason).toBe(
+      'its certificate is not recorded yet; its melt check is not recorded yet',
+    );
     expect(book.newestLot().hold_reason).toBe('its melt check is not recorded yet');
     expect(book.lastVoucher().documents.map((file) => file.id)).toEqual([certificate]);
   });
 
   it('keeps a customer’s own metal the customer’s, in the customer’s account', () => {
     const { book, mara, safe, customer, otherCustomer } = aWorkshop();
-    const ring = { form: 'old_gold', description: 'wedding ring', basis: 'unknown', weighing: { gross_g: '4.2' } };
+    const ring = {
+      form: 'old_gold',
+      description: 'wedding ring',
+      basis: 'unknown',
+      weighing: { gross_g: '4.2' },
+    };
     const own = { ...ring, owner_id: customer, origin: 'customers_own' };
     book.run(weighIn, { party_id: customer, safe_id: safe, lines: [own] }, mara);
     expect(book.ledger()).toEqual(['Safe | wedding ring | 4.200 g', 'Edda Lorn | wedding ring | -4.200 g']);
     const foreign = { ...ring, owner_id: otherCustomer };
-    expect(book.refusal(weighIn, { party_id: customer, safe_id: safe, lines: [foreign] }, mara).code).toBe('wrong_owner');
+    expect(book.refusal(weighIn, { party_id: customer, safe_id: safe, lines: [foreign] }, mara).code).toBe(
+      'wrong_owner',
+    );
   });
 
   it('adds to an open tray of the same alloy, owner, origin and form, and to no other', () => {
     const { book, mara, safe, supplier } = aWorkshop();
-    const tray = book.put(safe, 'tray of 750 scrap', '10.000', { form: 'clean_scrap', alloy: '750 yellow', gold: '748' });
+    const tray = book.put(safe, 'tray of 750 scrap', '10.000', {
+      form: 'clean_scrap',
+      alloy: '750 yellow',
+      gold: '748',
+    });
     const scrap = {
       form: 'clean_scrap',
       alloy: '750 yellow',
@@ -115,7 +128,12 @@ describe('weigh-in', () => {
     const body = (line: object) => ({ party_id: supplier, safe_id: safe, lines: [line] });
     book.run(weighIn, body(scrap), mara);
     expect(book.ledger('places')).toEqual(['Safe | tray of 750 scrap | 15.000 g | gold 11.230']);
-    for (const other of [{ alloy: '585 yellow' }, { form: 'filings' }, { origin: 'mined' }, { owner_id: supplier }]) {
+    for (const other of [
+      { alloy: '585 yellow' },
+      { form: 'filings' },
+      { origin: 'mined' },
+      { owner_id: supplier },
+    ]) {
       expect(book.refusal(weighIn, body({ ...scrap, ...other }), mara).code).toBe('lots_differ');
     }
     const twice = { ...body(scrap), lines: [scrap, scrap] };
@@ -126,7 +144,11 @@ describe('weigh-in', () => {
     const { book, mara, safe, bench2, supplier } = aWorkshop();
     const tare = { ...grain, weighing: { gross_g: '12', tare_g: '13', tare_kind: 'measured' } };
     const stones = { ...grain, weighing: { gross_g: '2', stones_ct: '10' } };
-    const refusals = book.refusals(weighIn, { party_id: supplier, safe_id: safe, lines: [tare, stones] }, mara);
+    const refusals = book.refusals(
+      weighIn,
+      { party_id: supplier, safe_id: safe, lines: [tare, stones] },
+      mara,
+    );
     expect(refusals.map(({ code, field }) => [code, field])).toEqual([
       ['tare_over_gross', 'lines.0.weighing.tare_g'],
       ['stones_over_net', 'lines.1.weighing.stones_ct'],
