@@ -7,6 +7,8 @@ import type { EntryDraft, Outcome } from '../book/draft.ts';
 import { accept, refuse } from '../book/draft.ts';
 import type { Facts, RecordedVoucher } from '../book/facts.ts';
 import { allOf } from '../book/outcome.ts';
+import type { Micrograms } from '../mass/micrograms.ts';
+import { printGrams } from '../mass/micrograms.ts';
 import { id, longText, shortText } from '../schemas/primitives.ts';
 import { z } from '../schemas/zod.ts';
 import type { Amount } from './amount.ts';
@@ -139,8 +141,9 @@ function lineEntries(
 ): Outcome<readonly EntryDraft[]> {
   const lot = findLot(facts, line.lot_id, `${field}.lot_id`);
   if (!lot.ok) return lot;
-  if (ends.variance !== null && !bookedVariance(ends.variance, ends.from.id, lot.value.id)) {
-    const sentence = `Voucher ${ends.variance.sequence} booked no shortage of ${lot.value.code}. Choose the voucher that did.`;
+  const booked = ends.variance === null ? null : bookedVariance(ends.variance, ends.from.id, lot.value.id);
+  if (booked === 0n) {
+    const sentence = `That voucher booked no shortage of ${lot.value.code}. Choose the voucher that did.`;
     return refuse({ code: 'invalid', field: `${field}.lot_id`, sentence });
   }
   const drawn = drawAmount(
@@ -155,13 +158,16 @@ function lineEntries(
     return refuse({ code: 'invalid', field: `${field}.amount.emptied`, sentence });
   }
   const { mass, pieces } = drawn.value;
+  if (booked !== null && mass.gross > booked) {
+    const sentence = `That voucher booked ${printGrams(booked, 3)} g of ${lot.value.code} as short. No more of it can be explained. Enter that or less.`;
+    return refuse({ code: 'not_enough', field: `${field}.amount`, sentence });
+  }
   return accept(moveEntries({ lot_id: lot.value.id, mass, pieces }, ends.from.id, ends.to.id));
 }
 
-/** Whether a voucher booked a shortage of the lot to count variance, and still stands. */
-function bookedVariance(voucher: RecordedVoucher, variance_id: string, lot_id: string): boolean {
-  if (voucher.reversed_by !== null) return false;
-  return voucher.entries.some(
-    (entry) => entry.account_id === variance_id && entry.lot_id === lot_id && entry.mass.gross > 0n,
-  );
+/** The shortage of a lot that a voucher booked to count variance, in micrograms; nothing where it was reversed. */
+function bookedVariance(voucher: RecordedVoucher, variance_id: string, lot_id: string): Micrograms {
+  if (voucher.reversed_by !== null) return 0n;
+  const booked = voucher.entries.find((entry) => entry.account_id === variance_id && entry.lot_id === lot_id);
+  return booked === undefined || booked.mass.gross < 0n ? 0n : booked.mass.gross;
 }

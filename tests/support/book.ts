@@ -173,6 +173,11 @@ export class Book {
     return draft;
   }
 
+  /** Runs an event and posts it where it is accepted; gives null where it is refused. */
+  attempt<Input>(event: EventDefinition<Input>, body: unknown, actor: Actor): EventDraft | null {
+    return this.#ask(event, body, actor).ok ? this.run(event, body, actor) : null;
+  }
+
   /** What an event would post. Throws with its sentences where it is refused. */
   draft<Input>(event: EventDefinition<Input>, body: unknown, actor: Actor): EventDraft {
     const outcome = this.#ask(event, body, actor);
