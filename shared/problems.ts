@@ -6,6 +6,8 @@ export const PROBLEMS = {
   malformed: { status: 400, title: 'The request can’t be read' },
   not_signed_in: { status: 401, title: 'Not signed in' },
   not_permitted: { status: 403, title: 'Not permitted' },
+  role_ended: { status: 403, title: 'Access ended' },
+  wrong_pin: { status: 422, title: 'Wrong PIN' },
   cross_site: { status: 403, title: 'Sent from another site' },
   not_found: { status: 404, title: 'Not found' },
   wrong_method: { status: 405, title: 'Wrong method' },

@@ -2,9 +2,9 @@
  * The connection to PostgreSQL, and transactions that carry their workshop. The workshop is set for the transaction
  * and never for the connection, so that nothing of one workshop can be left behind for the next.
  */
-import { Sequelize } from 'sequelize';
+import { QueryTypes, Sequelize } from 'sequelize';
 import { z } from '../../shared/schemas/zod.ts';
-import type { Tx } from './rows.ts';
+import type { Bind, Tx } from './rows.ts';
 import { txOver } from './rows.ts';
 
 export interface Scope {
@@ -16,6 +16,8 @@ export interface Database {
   readonly sequelize: Sequelize;
   /** Runs one use case in one transaction, inside the wall of a workshop and as a signed-in user. */
   inScope<T>(scope: Scope, work: (tx: Tx) => Promise<T>): Promise<T>;
+  /** One statement by itself, outside any workshop's wall: for what sets its own scope, and for health. */
+  once<T>(schema: z.ZodType<T>, sql: string, bind?: Bind): Promise<T[]>;
   close(): Promise<void>;
 }
 
@@ -45,6 +47,10 @@ export function connect(url: string, pool_size = 10): Database {
         await tx.rows(z.unknown(), SET_SCOPE, [scope.workshop_id ?? '', scope.user_id ?? '']);
         return work(tx);
       }),
+    once: async (schema, sql, bind = []) =>
+      z
+        .array(schema)
+        .parse(await sequelize.query(sql, { bind: [...bind], type: QueryTypes.SELECT, raw: true })),
     close: () => sequelize.close(),
   };
 }

@@ -5,6 +5,7 @@ import { bookTables } from './2026-12-01-02-book-tables.ts';
 import { masterData } from './2026-12-01-03-master-data.ts';
 import { projectAct } from './2026-12-01-04-project-act.ts';
 import { postRecords } from './2026-12-01-05-post-records.ts';
+import { identity } from './2026-12-01-06-identity.ts';
 import { requestsAndQueue } from './2026-12-01-07-requests-and-queue.ts';
 import { readFacts } from './2026-12-01-08-read-facts.ts';
 
@@ -14,6 +15,7 @@ export const migrations: readonly Migration[] = [
   masterData,
   projectAct,
   postRecords,
+  identity,
   requestsAndQueue,
   readFacts,
 ];

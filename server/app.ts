@@ -1,0 +1,81 @@
+/** The Express app: its middleware in the order in which a request passes it. */
+import { existsSync } from 'node:fs';
+import { resolve } from 'node:path';
+import cookieParser from 'cookie-parser';
+import express from 'express';
+import type { Express } from 'express';
+import { pinoHttp } from 'pino-http';
+import { randomUUID } from 'node:crypto';
+import type { AppContext } from './context.ts';
+import { securityHeaders } from './middleware/headers.ts';
+import { problemHandler } from './middleware/problem-handler.ts';
+import { apiRouter } from './middleware/router.ts';
+import { sameSiteOnly } from './middleware/same-site.ts';
+import { jsonOnly } from './middleware/json-only.ts';
+import { ProblemError } from './problem.ts';
+import { routes } from './routes/index.ts';
+
+const BODY_LIMIT = '1mb';
+
+export function createApp(context: AppContext): Express {
+  const app = express();
+  app.disable('x-powered-by');
+  app.set('trust proxy', context.config.trust_proxy ? 1 : false);
+  app.use(
+    pinoHttp({
+      logger: context.log,
+      genReqId: () => randomUUID(),
+      serializers: {
+        req: ({ id, method, url }: RequestLine) => ({ id, method, path: url.split('?')[0] }),
+        res: ({ statusCode }: { statusCode: number }) => ({ statusCode }),
+      },
+      autoLogging: { ignore: (request) => request.url === '/api/v1/health/live' },
+    }),
+  );
+  app.use(securityHeaders());
+  app.use(cookieParser());
+  app.use(
+    '/api',
+    sameSiteOnly(() => context.publicUrl()),
+    jsonOnly(),
+    express.json({ limit: BODY_LIMIT, strict: true }),
+  );
+  app.use('/api/v1', apiRouter(context, routes));
+  app.use('/api', () => {
+    throw new ProblemError('not_found', 'There is nothing at this address.');
+  });
+  serveClient(app, resolve(context.config.client_dir));
+  app.use(problemHandler(context.log));
+  return app;
+}
+
+interface RequestLine {
+  readonly id: string;
+  readonly method: string;
+  readonly url: string;
+}
+
+/** The built client; every path that is not a file is a page of it. */
+function serveClient(app: Express, dir: string): void {
+  if (!existsSync(dir)) return;
+  app.use(
+    '/assets',
+    express.static(resolve(dir, 'assets'), {
+      immutable: true,
+      maxAge: '1y',
+      index: false,
+      fallthrough: true,
+    }),
+  );
+  app.use(express.static(dir, { index: false, maxAge: 0 }));
+  app.get('/{*page}', (request, response, next) => {
+    if (request.path.startsWith('/assets/')) {
+      next(new ProblemError('not_found', 'There is nothing at this address.'));
+      return;
+    }
+    response.sendFile(resolve(dir, 'index.html'), {
+      cacheControl: false,
+      headers: { 'Cache-Control': 'no-cache' },
+    });
+  });
+}

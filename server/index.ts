@@ -1,0 +1,74 @@
+/**
+ * The process: reads its configuration, starts listening even while the database is away (answering 503), refuses to
+ * serve from a database whose rules could be switched off, and ends in good order.
+ */
+import { createServer } from 'node:http';
+import { setTimeout as pause } from 'node:timers/promises';
+import { createApp } from './app.ts';
+import { reasonsAgainst } from './check-database.ts';
+import { readConfig } from './config.ts';
+import { startContext } from './start-context.ts';
+
+const RETRY_MS = 2_000;
+const LAST_ANSWERS_MS = 10_000;
+
+const config = (() => {
+  try {
+    return readConfig(process.env);
+  } catch (error) {
+    console.error(`Grainward can't start:\n${error instanceof Error ? error.message : String(error)}`);
+    process.exit(2);
+  }
+})();
+
+let address = config.public_url ?? `http://127.0.0.1:${config.port}`;
+const started = await startContext(config, () => address);
+const { context } = started;
+const server = createServer(
+  { requestTimeout: 30_000, headersTimeout: 15_000, keepAliveTimeout: 10_000 },
+  createApp(context),
+);
+server.listen(config.port, '127.0.0.1', () => {
+  const bound = server.address();
+  if (config.public_url === null && bound !== null && typeof bound === 'object')
+    address = `http://127.0.0.1:${bound.port}`;
+  context.log.info({ address }, 'listening');
+  process.send?.({ listening: address });
+});
+
+process.on('SIGTERM', end);
+process.on('SIGINT', end);
+process.on('uncaughtException', (error) => {
+  context.log.fatal({ err: error }, 'the process can’t go on safely');
+  process.exit(1);
+});
+process.on('unhandledRejection', (error) => {
+  context.log.fatal({ err: error }, 'the process can’t go on safely');
+  process.exit(1);
+});
+
+await whenReachable();
+
+async function whenReachable(): Promise<void> {
+  for (;;) {
+    const reasons = await reasonsAgainst(context.db).catch(() => null);
+    if (reasons === null) {
+      context.log.warn('the database can’t be reached yet');
+      await pause(RETRY_MS);
+      continue;
+    }
+    if (reasons.length === 0) return;
+    console.error(
+      `Grainward can't serve from this database:\n${reasons.map((reason) => `- ${reason}`).join('\n')}`,
+    );
+    process.exit(2);
+  }
+}
+
+async function end(): Promise<void> {
+  setTimeout(() => process.exit(1), LAST_ANSWERS_MS).unref();
+  server.close();
+  server.closeIdleConnections();
+  await started.close();
+  process.exit(0);
+}

@@ -1,0 +1,17 @@
+/** Every route of the API. What is not here is not answered. */
+import { eventRoutes } from './events.ts';
+import { healthRoutes } from './health.ts';
+import { metalRequestRoutes } from './metal-requests.ts';
+import { peopleRoutes } from './people.ts';
+import type { Route } from './route.ts';
+import { sessionRoutes } from './session.ts';
+import { signatureRoutes } from './signatures.ts';
+
+export const routes: readonly Route[] = [
+  ...healthRoutes,
+  ...sessionRoutes,
+  ...peopleRoutes,
+  ...eventRoutes,
+  ...signatureRoutes,
+  ...metalRequestRoutes,
+];

@@ -1,0 +1,69 @@
+/** The queue of acts that wait for a second signature. */
+import { refuseSignatureBody } from '../../shared/schemas/signature-request.ts';
+import { checkBody } from '../services/events/check-body.ts';
+import {
+  approveSignature,
+  refuseSignature,
+  signatureRequestById,
+  waitingSignatures,
+  withdrawSignature,
+} from '../services/signatures/signature-requests.ts';
+import type { Route } from './route.ts';
+
+export const signatureRoutes: readonly Route[] = [
+  {
+    method: 'get',
+    path: '/signature-requests',
+    allow: 'book.read',
+    summary: 'What waits for a second signature.',
+    handle: async ({ context, who }) => ({
+      body: { requests: await context.db.inScope(who, waitingSignatures) },
+    }),
+  },
+  {
+    method: 'get',
+    path: '/signature-requests/:id',
+    allow: 'book.read',
+    summary: 'One request, with what would be posted.',
+    handle: async ({ context, who, params }) => ({
+      body: await context.db.inScope(who, (tx) => signatureRequestById(tx, params['id'] ?? '')),
+    }),
+  },
+  {
+    method: 'post',
+    path: '/signature-requests/:id/approve',
+    allow: 'signature.give',
+    summary: 'Signs a request of somebody else; it is posted then.',
+    async handle({ context, who, params }) {
+      const answer = await context.db.inScope(who, (tx) => approveSignature(tx, params['id'] ?? '', who));
+      const last = answer.records.at(-1);
+      if (last !== undefined) context.stream.changed(who.workshop_id, last.sequence);
+      context.log.info(
+        { event: 'signature_given', person_id: who.person_id, workshop_id: who.workshop_id },
+        'signed',
+      );
+      return { status: 201, body: answer };
+    },
+  },
+  {
+    method: 'post',
+    path: '/signature-requests/:id/refuse',
+    allow: 'signature.give',
+    summary: 'Refuses a request of somebody else.',
+    async handle({ context, who, params, body }) {
+      const { note } = checkBody(refuseSignatureBody, body);
+      await context.db.inScope(who, (tx) => refuseSignature(tx, params['id'] ?? '', who, note));
+      return { status: 204, body: undefined };
+    },
+  },
+  {
+    method: 'post',
+    path: '/signature-requests/:id/withdraw',
+    allow: 'signature.give',
+    summary: 'Takes one’s own request back.',
+    async handle({ context, who, params }) {
+      await context.db.inScope(who, (tx) => withdrawSignature(tx, params['id'] ?? '', who));
+      return { status: 204, body: undefined };
+    },
+  },
+];
