@@ -1,6 +1,7 @@
 /**
- * Write-off: metal that is gone: stolen, lost in transit, not recovered. It leaves a place, or the count variance
- * whose cause was found later; found again it comes back from there. Two sign it.
+ * Write-off: metal that is gone: stolen, lost in transit, not recovered. It leaves a place, the count variance whose
+ * cause was found later, or the loss of an operation that the settled sweeps did not bring back; found again it comes
+ * back from there. Two sign it.
  */
 import type { Account } from '../book/account.ts';
 import type { EntryDraft, Outcome } from '../book/draft.ts';
@@ -15,17 +16,19 @@ import type { Amount } from './amount.ts';
 import { drawAmount, statedAmountSchema } from './amount.ts';
 import { commonFields, readCommon } from './common-fields.ts';
 import type { EventDefinition } from './definition.ts';
-import { eachLotOnce, findJob, findLot, findPlace, findVoucher, theAccount } from './lookup.ts';
+import { eachLotOnce, findJob, findLot, findPlace, findVoucher, lossAccount, theAccount } from './lookup.ts';
 import { makeVoucher, moveEntries, weighingRows } from './make-voucher.ts';
 
 const writeOffSchema = z.strictObject({
   ...commonFields,
-  /** Out of a place, out of a count variance whose cause was found, or found again. */
-  way: z.enum(['from_place', 'from_variance', 'found_again']),
+  /** Out of a place, a count variance whose cause was found, or an operation's loss; or found again. */
+  way: z.enum(['from_place', 'from_variance', 'from_loss', 'found_again']),
   /** The place that it was in, or where it is put now that it is found. */
   place_id: id.nullable().default(null),
   /** The voucher that booked the count variance. */
   variance_voucher_id: id.nullable().default(null),
+  /** The operation whose loss is given up. */
+  operation: shortText.nullable().default(null),
   cause: z.enum(['theft', 'lost_in_transit', 'not_recovered'], 'Say what became of it.'),
   /** Number of the police report or of the claim. */
   number: shortText.nullable().default(null),
@@ -83,6 +86,7 @@ export const writeOff: EventDefinition<WriteOffInput> = {
         number: input.number,
         reason: input.reason,
         variance_voucher_id: input.variance_voucher_id,
+        operation: input.operation,
         job_id: input.job_id,
         weighings: weighingRows(weighings, facts, actor),
       },
@@ -103,6 +107,10 @@ function endsOf(input: WriteOffInput, facts: Facts): Outcome<Ends> {
     if (!variance.ok) return variance;
     return accept({ from: theAccount(facts, 'count_variance'), to: off, variance: variance.value });
   }
+  if (input.way === 'from_loss') {
+    const loss = lossGivenUp(input, facts);
+    return loss.ok ? accept({ from: loss.value, to: off, variance: null }) : loss;
+  }
   if (input.place_id === null) {
     const sentence = 'It is not said where the metal is or was. Choose the place.';
     return refuse({ code: 'invalid', field: 'place_id', sentence });
@@ -111,6 +119,19 @@ function endsOf(input: WriteOffInput, facts: Facts): Outcome<Ends> {
   if (!place.ok) return place;
   const [from, to] = input.way === 'from_place' ? [place.value, off] : [off, place.value];
   return accept({ from, to, variance: null });
+}
+
+/** The loss account that metal is given up on. Refuses a cause that no working loss has, and a missing operation. */
+function lossGivenUp(input: WriteOffInput, facts: Facts): Outcome<Account> {
+  if (input.cause !== 'not_recovered') {
+    const sentence = 'What an operation lost was neither stolen nor lost in transit. Choose “not recovered”.';
+    return refuse({ code: 'invalid', field: 'cause', sentence });
+  }
+  if (input.operation === null) {
+    const sentence = 'It is not said which operation’s loss is given up. Choose the operation.';
+    return refuse({ code: 'invalid', field: 'operation', sentence });
+  }
+  return lossAccount(facts, input.operation, 'operation');
 }
 
 function varianceVoucher(input: WriteOffInput, facts: Facts): Outcome<RecordedVoucher> {

@@ -3,6 +3,7 @@ import { hold } from '../../../shared/events/hold.ts';
 import { issue } from '../../../shared/events/issue.ts';
 import { useUp } from '../../../shared/events/use-up.ts';
 import { writeOff } from '../../../shared/events/write-off.ts';
+import { massVector } from '../../../shared/mass/vector.ts';
 import { aWorkshop } from '../../support/workshop.ts';
 
 const stated = (gross_g: string) => ({ how: 'stated', gross_g });
@@ -87,6 +88,20 @@ describe('write-off', () => {
     book.run(writeOff, { ...found, variance_voucher_id: variance }, mara);
     expect(book.ledger()).toContain('Written off | 750 sheet | 1.000 g | gold 0.750');
     expect(book.ledger().some((line) => line.startsWith('Count variance'))).toBe(false);
+  });
+
+  it('gives up an operation’s loss that the sweeps did not bring back, and nothing stolen from there', () => {
+    const { book, mara, bench4, sheet, body } = stolen();
+    const filing = book.find('working_loss', 'filing');
+    book.post(sheet, massVector({ gross: 2_000_000n, gold: 1_500_000n }), { to: filing });
+    const lines = [{ lot_id: sheet, amount: stated('0.5') }];
+    const loss = { ...body, way: 'from_loss', place_id: bench4, operation: 'filing', number: null, lines };
+    expect(book.refusal(writeOff, loss, mara).field).toBe('cause');
+    const given = { ...loss, cause: 'not_recovered' };
+    expect(book.refusal(writeOff, { ...given, operation: null }, mara).field).toBe('operation');
+    book.run(writeOff, given, mara);
+    expect(book.ledger()).toContain('Loss, filing | 750 sheet | 1.500 g | gold 1.125');
+    expect(book.ledger()).toContain('Written off | 750 sheet | 0.500 g | gold 0.375');
   });
 
   it('refuses a voucher that booked no shortage of the lot', () => {
