@@ -38,6 +38,8 @@ export const PROBLEMS = {
   not_receiver: { status: 403, title: 'Not the receiver' },
   already_done: { status: 409, title: 'Already done' },
   used_since: { status: 409, title: 'Metal used since' },
+  more_back: { status: 422, title: 'More back than out' },
+  over_limit: { status: 422, title: 'Beyond a limit' },
   too_many: { status: 429, title: 'Too many tries' },
   failed: { status: 500, title: 'Our own fault' },
   unavailable: { status: 503, title: 'For now not possible' },

@@ -36,7 +36,7 @@ export const postRecords: Migration = {
       END LOOP;
     END $$;
 
-    CREATE FUNCTION apply_entries(w uuid, n bigint, job uuid) RETURNS void
+    CREATE FUNCTION apply_entries(w uuid, n bigint, job uuid, kept uuid[]) RETURNS void
       LANGUAGE plpgsql SET search_path = public, pg_temp AS $$
     BEGIN
       -- UPDATE first, then INSERT what is missing: an upsert would trip the check on the proposed row.
@@ -55,7 +55,8 @@ export const postRecords: Migration = {
       WHERE NOT EXISTS (SELECT 1 FROM changed d WHERE d.account_id = c.account_id AND d.lot_id = c.lot_id);
 
       INSERT INTO job_holding AS j (workshop_id, account_id, lot_id, job_id, ${columns}, pieces)
-      SELECT w, e.account_id, e.lot_id, coalesce(job, '00000000-0000-0000-0000-000000000000'),
+      SELECT w, e.account_id, e.lot_id,
+        CASE WHEN job IS NULL OR e.lot_id = ANY (kept) THEN '00000000-0000-0000-0000-000000000000' ELSE job END,
         ${each((m) => `sum(e.${m}_ug)::bigint`)}, sum(e.pieces)::bigint
       FROM entry e JOIN account a ON a.workshop_id = w AND a.id = e.account_id AND a.kind IN ('bench', 'station', 'outworker')
       WHERE e.workshop_id = w AND e.voucher_sequence = n GROUP BY e.account_id, e.lot_id
@@ -124,7 +125,9 @@ export const postRecords: Migration = {
           IF NOT FOUND THEN
             RAISE EXCEPTION 'a voucher has two entries or more and sums to zero in all five masses' USING ERRCODE = 'GW001';
           END IF;
-          PERFORM apply_entries(w, n, job);
+          -- Stock that a bench keeps for several jobs leaves the share that lies there for none of them.
+          PERFORM apply_entries(w, n, job,
+            ARRAY(SELECT (k.value->>'lot_id')::uuid FROM jsonb_array_elements(coalesce(d->'detail'->'kept', '[]')) k));
           PERFORM check_day_closings(w, n, on_day);
           IF k = 'reversal' THEN PERFORM check_mirror(w, n, (d->>'reverses')::uuid); END IF;
         ELSIF d->'entries' <> '[]'::jsonb THEN

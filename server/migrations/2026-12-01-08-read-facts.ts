@@ -106,7 +106,12 @@ export const readFacts: Migration = {
           FROM unnest(held) h`)},
         'job_holdings', ${list(`
           SELECT jsonb_build_object('account_id', j.account_id, 'lot_id', j.lot_id,
-            'job_id', nullif(j.job_id, '00000000-0000-0000-0000-000000000000'), ${masses('j')}, 'pieces', j.pieces::text) AS row
+            'job_id', nullif(j.job_id, '00000000-0000-0000-0000-000000000000'), ${masses('j')}, 'pieces', j.pieces::text,
+            'came_by', (SELECT jsonb_build_object('kind', r.kind, 'operation', r.operation)
+              FROM entry e JOIN record r ON r.workshop_id = w AND r.sequence = e.voucher_sequence
+              WHERE e.workshop_id = w AND e.account_id = j.account_id AND e.lot_id = j.lot_id AND e.gross_ug > 0
+                AND coalesce(r.job_id, '00000000-0000-0000-0000-000000000000') = j.job_id
+              ORDER BY e.voucher_sequence DESC LIMIT 1)) AS row
           FROM unnest(by_job) j`)},
         'lot_entries', ${list(`
           SELECT entry_json(e, r.id, r.kind, r.operation, r.bench) AS row FROM unnest(past) e JOIN record r ON r.workshop_id = w AND r.sequence = e.voucher_sequence

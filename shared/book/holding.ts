@@ -12,6 +12,8 @@ export interface Holding {
 /** A work place's holding of a lot, told by the job that it is there for (null: stock work, repairs). */
 export interface JobHolding extends Holding {
   readonly job_id: string | null;
+  /** The voucher kind and operation that last put some of it there; so that work kept on is counted once. */
+  readonly came_by: { readonly kind: string; readonly operation: string | null } | null;
 }
 
 /** What an account has of a lot; nothing where there is no such holding. */

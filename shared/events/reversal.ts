@@ -45,6 +45,7 @@ export const reversal: EventDefinition<ReversalInput> = {
         person_id: detailLeaf(detail, 'person_id'),
         job_id: detailLeaf(detail, 'job_id'),
         counterparty_id: detailLeaf(detail, 'counterparty_id'),
+        kept: keptRows(detail),
       },
       entries: voucher.value.entries.map(mirrored),
     });
@@ -125,4 +126,10 @@ function someMass(mass: MassVector, test: (ug: bigint) => boolean): boolean {
 function listed(sequences: readonly string[]): string {
   const last = sequences.at(-1) ?? '';
   return sequences.length < 2 ? last : `${sequences.slice(0, -1).join(', ')} and ${last}`;
+}
+
+/** Lots kept for several jobs, named again so that they go back to where they were taken from. */
+function keptRows(detail: RecordedVoucher['detail']): readonly { readonly lot_id: string }[] {
+  const read = z.array(z.object({ lot_id: z.string() })).safeParse(detail['kept']);
+  return read.success ? read.data : [];
 }

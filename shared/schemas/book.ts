@@ -86,11 +86,16 @@ export const holdingJson = z.object(holdingFields).transform((row) => ({
 }));
 
 export const jobHoldingJson = z
-  .object({ ...holdingFields, job_id: z.string().nullable() })
+  .object({
+    ...holdingFields,
+    job_id: z.string().nullable(),
+    came_by: z.object({ kind: z.string(), operation: z.string().nullable() }).nullable(),
+  })
   .transform((row) => ({
     account_id: row.account_id,
     lot_id: row.lot_id,
     job_id: row.job_id,
+    came_by: row.came_by,
     mass: massOf(row),
     pieces: row.pieces,
   }));

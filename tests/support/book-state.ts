@@ -140,7 +140,8 @@ export class BookState {
       throw new Error('A voucher was reversed twice.');
     }
     this.#checkOwners(voucher);
-    const job_id = typeof voucher.detail.job_id === 'string' ? voucher.detail.job_id : null;
+    const voucherJob = typeof voucher.detail.job_id === 'string' ? voucher.detail.job_id : null;
+    const kept = keptLots(voucher.detail);
     for (const entry of voucher.entries) {
       if (isZeroMass(entry.mass) && (entry.pieces ?? 0n) === 0n) throw new Error('An entry moves nothing.');
       const account = this.account(entry.account_id);
@@ -148,6 +149,7 @@ export class BookState {
       const key = `${entry.account_id} ${entry.lot_id}`;
       this.#holdings.set(key, added(this.held(entry.account_id, entry.lot_id), entry));
       if (!isWorkPlace(account.kind)) continue;
+      const job_id = kept.has(entry.lot_id) ? null : voucherJob;
       const jobKey = `${key} ${job_id ?? ''}`;
       const blank = {
         account_id: entry.account_id,
@@ -155,8 +157,14 @@ export class BookState {
         mass: ZERO_MASS,
         pieces: null,
         job_id,
+        came_by: null,
       };
-      this.#jobHoldings.set(jobKey, { ...added(this.#jobHoldings.get(jobKey) ?? blank, entry), job_id });
+      const known = this.#jobHoldings.get(jobKey) ?? blank;
+      const came_by =
+        entry.mass.gross > 0n
+          ? { kind: voucher.kind, operation: leaf(voucher.detail, 'operation') }
+          : known.came_by;
+      this.#jobHoldings.set(jobKey, { ...added(known, entry), job_id, came_by });
     }
     for (const entry of voucher.entries) this.#checkPlace(entry.account_id, entry.lot_id, voucher);
     for (const entry of voucher.entries) this.#checkDays(entry.account_id, entry.lot_id, voucher);
@@ -293,4 +301,16 @@ function checkDetail(detail: Detail): void {
       }
     }
   }
+}
+
+/** Lots that a bench keeps for several jobs: what is used of them leaves the share of none. */
+function keptLots(detail: Detail): ReadonlySet<string> {
+  const rows = Array.isArray(detail.kept) ? detail.kept : [];
+  return new Set(
+    rows.flatMap((row: unknown) =>
+      typeof row === 'object' && row !== null && 'lot_id' in row && typeof row.lot_id === 'string'
+        ? [row.lot_id]
+        : [],
+    ),
+  );
 }

@@ -116,7 +116,10 @@ function row(scene: Scene, kinds: readonly string[], at: number): JobHolding | n
   const { state } = scene.book;
   const here = lying(scene, kinds).filter((h) => !work.includes(state.account(h.account_id).kind));
   const byJob = state.allJobHoldings().filter((h) => kinds.includes(state.account(h.account_id).kind));
-  return pick([...here.map((h) => ({ ...h, job_id: null })), ...byJob.filter((h) => h.mass.gross > 0n)], at);
+  return pick(
+    [...here.map((h) => ({ ...h, job_id: null, came_by: null })), ...byJob.filter((h) => h.mass.gross > 0n)],
+    at,
+  );
 }
 
 /** Every act, by the name of its event. */
