@@ -8,12 +8,17 @@ import { hold } from './hold.ts';
 import { issue } from './issue.ts';
 import { opening } from './opening.ts';
 import { ownership } from './ownership.ts';
+import { arrive, consign } from './refining/consign.ts';
+import { outturn } from './refining/outturn.ts';
+import { settle } from './refining/settle.ts';
+import { sweepUp } from './refining/sweep-up.ts';
 import { release } from './release.ts';
 import { returnToOwner } from './return-to-owner.ts';
 import { reversal } from './reversal.ts';
 import { settleDispute } from './settle-dispute.ts';
 import { transfer } from './transfer.ts';
 import { useUp } from './use-up.ts';
+import { weighBack } from './weigh-back/weigh-back.ts';
 import { weighIn } from './weigh-in.ts';
 import {
   changeCustodian,
@@ -43,7 +48,13 @@ export const EVENTS: Readonly<Record<EventName, EventDefinition<unknown>>> = {
   acknowledge,
   'dispute-handover': disputeHandover,
   'settle-dispute': settleDispute,
+  'weigh-back': weighBack,
   delivery,
+  'sweep-up': sweepUp,
+  consign,
+  arrive,
+  outturn,
+  settle,
   'use-up': useUp,
   ownership,
   'return-to-owner': returnToOwner,

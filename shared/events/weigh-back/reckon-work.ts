@@ -291,7 +291,12 @@ function checkPieces(work: WorkInput, lots: readonly OutLot[], field: string): O
   for (const [index, line] of work.unused.entries()) {
     const out = lots.find(({ lot }) => lot.id === line.lot_id);
     if (out === undefined || (out.pieces === null) !== (line.pieces === null)) {
-      const sentence = out === undefined ? 'That lot was not out for this job.' : out.pieces === null ? 'Metal of this form is not kept by pieces. Leave the count empty.' : 'This lot is kept by pieces too. Count what came back.';
+      const sentence =
+        out === undefined
+          ? 'That lot was not out for this job.'
+          : out.pieces === null
+            ? 'Metal of this form is not kept by pieces. Leave the count empty.'
+            : 'This lot is kept by pieces too. Count what came back.';
       return refuse({ code: 'pieces_needed', field: `${field}.unused.${index}.pieces`, sentence });
     }
     if ((line.pieces ?? 0n) > (out.pieces ?? 0n)) {
