@@ -1,0 +1,20 @@
+/** What the start scripts say: one line per step, with its time. Plain Node, no packages: it runs before they are there. */
+const started = new Map();
+
+/** Says that a step begins. */
+export function begin(step) {
+  started.set(step, Date.now());
+  process.stdout.write(`· ${step} …\n`);
+}
+
+/** Says that a step is done, and how long it took. */
+export function done(step, words = '') {
+  const seconds = ((Date.now() - (started.get(step) ?? Date.now())) / 1000).toFixed(1);
+  process.stdout.write(`✓ ${step}${words === '' ? '' : `: ${words}`} (${seconds} s)\n`);
+}
+
+/** Says why the script can't go on, and ends it. */
+export function giveUp(sentence) {
+  process.stderr.write(`\nGrainward can't go on: ${sentence}\n`);
+  process.exit(1);
+}
