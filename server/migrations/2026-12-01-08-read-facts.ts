@@ -61,7 +61,7 @@ export const readFacts: Migration = {
         SELECT h.* FROM holding h WHERE h.workshop_id = w AND h.lot_id = ANY (full_lots)
         UNION
         SELECT h.* FROM holding h WHERE h.workshop_id = w AND h.account_id = ANY (${ids('place_ids')})
-          AND (h.gross_ug <> 0 OR h.gold_ug <> 0 OR h.silver_ug <> 0 OR h.platinum_ug <> 0 OR h.palladium_ug <> 0)
+          AND (NOT h.in_place OR h.gross_ug <> 0 OR h.gold_ug <> 0 OR h.silver_ug <> 0 OR h.platinum_ug <> 0 OR h.palladium_ug <> 0)
       ) h;
       SELECT array_agg(j) INTO by_job FROM job_holding j WHERE j.workshop_id = w AND j.account_id = ANY (${ids('place_ids')})
         AND (j.gross_ug <> 0 OR j.gold_ug <> 0 OR j.silver_ug <> 0 OR j.platinum_ug <> 0 OR j.palladium_ug <> 0);

@@ -1,8 +1,10 @@
 /** Every route of the API. What is not here is not answered. */
 import { eventRoutes } from './events.ts';
 import { healthRoutes } from './health.ts';
+import { lotAndVoucherRoutes } from './lots-and-vouchers.ts';
 import { metalRequestRoutes } from './metal-requests.ts';
 import { peopleRoutes } from './people.ts';
+import { registerRoutes } from './registers.ts';
 import type { Route } from './route.ts';
 import { sessionRoutes } from './session.ts';
 import { signatureRoutes } from './signatures.ts';
@@ -14,4 +16,6 @@ export const routes: readonly Route[] = [
   ...eventRoutes,
   ...signatureRoutes,
   ...metalRequestRoutes,
+  ...registerRoutes,
+  ...lotAndVoucherRoutes,
 ];

@@ -13,6 +13,16 @@ export function checkBody<T>(schema: z.ZodType<T>, body: unknown): T {
   throw new ProblemError('invalid', 'Some entries are not right. Nothing was posted.', { errors });
 }
 
+/** The checked query of a list. Throws ProblemError `malformed`: a filter that is not offered is no filter. */
+export function checkQuery<T>(schema: z.ZodType<T>, query: unknown): T {
+  const read = schema.safeParse(query);
+  if (read.success) return read.data;
+  throw new ProblemError(
+    'malformed',
+    'A filter of this list is not one that it knows. Choose it from the list.',
+  );
+}
+
 function unknownField(keys: readonly string[]): string {
   return `${keys.join(', ')} is not asked for here. Leave it out.`;
 }
