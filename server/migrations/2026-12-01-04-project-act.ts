@@ -33,6 +33,7 @@ export const projectAct: Migration = {
               (d->>'hold_until')::date, coalesce(d->>'description', ''), on_day);
           INSERT INTO lot_parent (workshop_id, lot_id, parent_id)
             SELECT DISTINCT w, (d->>'lot_id')::uuid, (p->>'lot_id')::uuid FROM jsonb_array_elements(d->'parents') p;
+          UPDATE workshop_head SET lot_serial = greatest(lot_serial, split_part(d->>'code', '-', 2)::bigint) WHERE workshop_id = w;
         WHEN 'lot_held' THEN
           UPDATE lot SET standing = 'on_hold', hold_reason = d->>'reason', hold_until = (d->>'until')::date
             WHERE workshop_id = w AND id = (d->>'lot_id')::uuid;

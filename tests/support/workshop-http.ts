@@ -2,36 +2,52 @@
 import { z } from 'zod';
 import type { Person } from './server.ts';
 
-const facts = z.object({
-  accounts: z.array(z.object({ id: z.string(), kind: z.string(), name: z.string(), operation: z.string().nullable(), party_id: z.string().nullable() })),
-  people: z.array(z.object({ id: z.string(), name: z.string() })),
+const rows = z.object({ rows: z.array(z.object({ id: z.string(), kind: z.string(), name: z.string() })) });
+const people = z.object({ people: z.array(z.object({ id: z.string(), name: z.string() })) });
+const holding = z.object({
+  account_id: z.string(),
+  lot_id: z.string(),
+  gross_g: z.string(),
+  gold_g: z.string(),
+  silver_g: z.string(),
 });
-const holding = z.object({ account_id: z.string(), lot_id: z.string(), gross_g: z.string(), gold_g: z.string(), silver_g: z.string() });
 
 export interface HttpWorkshop {
   /** Id of the account of a kind, by its name where there are several. */
   account(kind: string, name?: string): Promise<string>;
   person(name: string): Promise<string>;
   party(kind: string, name: string): Promise<string>;
-  openPlace(kind: string, name: string, custodian_id?: string | null, party_id?: string | null): Promise<string>;
+  openPlace(
+    kind: string,
+    name: string,
+    custodian_id?: string | null,
+    party_id?: string | null,
+  ): Promise<string>;
   job(code: string, customer_id?: string | null): Promise<string>;
   /** "gross gold" in grams of a lot in a place, or "none". */
   held(account_id: string, lot_id: string): Promise<string>;
 }
 
 export function httpWorkshop(by: Person): HttpWorkshop {
-  const readFacts = async (needed: object) => facts.parse((await by.post('/facts', needed)).body);
-  const find = async (kind: string, name?: string, needed: object = {}) => {
-    const found = (await readFacts(needed)).accounts.find((a) => a.kind === kind && (name === undefined || a.name === name));
+  const find = async (kind: string, name?: string) => {
+    const accounts = rows.parse((await by.get('/accounts')).body).rows;
+    const found = accounts.find((a) => a.kind === kind && (name === undefined || a.name === name));
     if (found === undefined) throw new Error(`no ${kind} ${name ?? ''}`);
     return found.id;
   };
-  const opened = z.object({ detail: z.object({ account_id: z.string().optional(), party_id: z.string().nullish(), job_id: z.string().optional() }) });
-  const lastDetail = async (sequence: string) => opened.parse((await by.get(`/vouchers/${sequence}`)).body).detail;
+  const opened = z.object({
+    detail: z.object({
+      account_id: z.string().optional(),
+      party_id: z.string().nullish(),
+      job_id: z.string().optional(),
+    }),
+  });
+  const lastDetail = async (sequence: string) =>
+    opened.parse((await by.get(`/vouchers/${sequence}`)).body).detail;
   return {
     account: (kind, name) => find(kind, name),
     async person(name) {
-      const found = (await readFacts({})).people.find((p) => p.name === name);
+      const found = people.parse((await by.get('/people')).body).people.find((p) => p.name === name);
       if (found === undefined) throw new Error(`nobody is called ${name}`);
       return found.id;
     },
@@ -48,7 +64,9 @@ export function httpWorkshop(by: Person): HttpWorkshop {
       return (await lastDetail(records[0]?.sequence ?? '')).job_id ?? '';
     },
     async held(account_id, lot_id) {
-      const body = z.object({ holdings: z.array(holding) }).parse((await by.post('/facts', { lot_ids: [lot_id] })).body);
+      const body = z
+        .object({ holdings: z.array(holding) })
+        .parse((await by.post('/facts', { lot_ids: [lot_id] })).body);
       const row = body.holdings.find((h) => h.account_id === account_id);
       return row === undefined ? 'none' : `${row.gross_g} ${row.gold_g}`;
     },
