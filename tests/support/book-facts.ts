@@ -8,6 +8,7 @@ import type { VoucherDraft } from '../../shared/book/draft.ts';
 import { detailLeaf } from '../../shared/book/facts.ts';
 import type { Facts, FactsNeeded, RecordedEntry, RecordedVoucher } from '../../shared/book/facts.ts';
 import type { BookState, Posted } from './book-state.ts';
+import { unsweptLoss } from './unswept.ts';
 
 export function factsFor(state: BookState, needed: FactsNeeded): Facts {
   const vouchers = vouchersOf(state, needed);
@@ -38,6 +39,7 @@ export function factsFor(state: BookState, needed: FactsNeeded): Facts {
   ];
   const accounts = accountsOf(state, new Set(accountIds), partyIds);
   const partiesOfAccounts = accountIds.flatMap((id) => accounts.get(id)?.party_id ?? []);
+  const bin_feeds = state.bin_feeds.filter((feed) => (needed.bin_ids ?? []).includes(feed.bin_id));
   return {
     today: state.today,
     closed_through: state.closed_through,
@@ -54,8 +56,8 @@ export function factsFor(state: BookState, needed: FactsNeeded): Facts {
     jobs,
     people: state.people,
     allowances: state.allowances,
-    bin_feeds: state.bin_feeds.filter((feed) => (needed.bin_ids ?? []).includes(feed.bin_id)),
-    unswept: state.unswept.filter((loss) => (needed.bin_ids ?? []).includes(loss.bin_id)),
+    bin_feeds,
+    unswept: unsweptLoss(state, bin_feeds),
     prices: state.prices,
     settings: state.settings,
     ids: state.ids,

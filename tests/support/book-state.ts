@@ -15,7 +15,6 @@ import type {
   MetalPrice,
   Party,
   Person,
-  UnsweptLoss,
   WorkshopSettings,
 } from '../../shared/book/facts.ts';
 import type { Holding, JobHolding } from '../../shared/book/holding.ts';
@@ -55,7 +54,6 @@ export class BookState {
   readonly handovers: Handover[] = [];
   readonly allowances: Allowance[] = [];
   readonly bin_feeds: BinFeed[] = [];
-  readonly unswept: UnsweptLoss[] = [];
   readonly prices: MetalPrice[] = [];
   readonly records: Posted[] = [];
   readonly #holdings = new Map<string, Holding>();

@@ -169,18 +169,26 @@ function paymentRow(payment: OutturnPayment) {
   };
 }
 
-/** Sent − credited = assay difference + deduction + metal charge: a row per metal, so that it can be read. */
+/** Sent − credited = weighing difference + assay difference + deduction + metal charge: a row per metal. */
 function lineRows(line: OutturnInput['lines'][number], settled: SettledLine | undefined) {
   if (settled === undefined) return [];
-  return line.metals.map((row) => ({
-    lot_id: settled.lot.id,
-    metal: row.metal,
-    sent_g: printGrams(settled.settled[row.metal]),
-    assayed_g: printGrams(row.assayed_g),
-    credited_g: printGrams(row.credited_g),
-    assay_difference_g: printGrams(settled.assay_difference[row.metal]),
-    deduction_g: printGrams(settled.deduction[row.metal] - row.charge_g),
-    charge_g: printGrams(row.charge_g),
-    after_melt_g: line.after_melt_g === null ? null : printGrams(line.after_melt_g),
-  }));
+  const { assay_difference, weighing_difference, credited, deduction, lot } = settled;
+  const there = METALS.filter(
+    (metal) => settled.settled[metal] > 0n || line.metals.some((row) => row.metal === metal),
+  );
+  return there.map((metal) => {
+    const charge = line.metals.find((row) => row.metal === metal)?.charge_g ?? 0n;
+    return {
+      lot_id: lot.id,
+      metal,
+      sent_g: printGrams(settled.settled[metal] + weighing_difference[metal]),
+      weighing_difference_g: printGrams(weighing_difference[metal]),
+      assayed_g: printGrams(settled.settled[metal] - assay_difference[metal]),
+      assay_difference_g: printGrams(assay_difference[metal]),
+      deduction_g: printGrams(deduction[metal] - charge),
+      charge_g: printGrams(charge),
+      credited_g: printGrams(credited[metal]),
+      after_melt_g: line.after_melt_g === null ? null : printGrams(line.after_melt_g),
+    };
+  });
 }

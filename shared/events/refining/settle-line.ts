@@ -4,6 +4,7 @@
  * taken in metal, and the gross that is no settled metal. Foreign matter gets back exactly the gross that it gave.
  */
 import type { Account } from '../../book/account.ts';
+import { isPlace } from '../../book/account.ts';
 import type { EntryDraft, Outcome } from '../../book/draft.ts';
 import { accept, refuse } from '../../book/draft.ts';
 import type { Facts, RecordedEntry } from '../../book/facts.ts';
@@ -34,6 +35,8 @@ export interface SettledLine {
   readonly deduction: MassVector;
   /** Book less assay, per metal. */
   readonly assay_difference: MassVector;
+  /** Sent less arrived, told by the lot's first outturn and by no later one. */
+  readonly weighing_difference: MassVector;
   readonly entries: readonly EntryDraft[];
 }
 
@@ -47,7 +50,7 @@ export function settleLine(
   const found = findSettled(line, refiner, field, facts);
   if (!found.ok) return found;
   const { lot, settled } = found.value;
-  const metals = metalsOf(line, field);
+  const metals = metalsOf(line, settled, field);
   if (!metals.ok) return metals;
   const { assayed, credited, charged } = metals.value;
   const each = (of: (metal: Metal) => Micrograms): MassVector => {
@@ -62,12 +65,15 @@ export function settleLine(
   const assay_difference = each((metal) => settled[metal] - assayed[metal]);
   const deduction = each((metal) => assayed[metal] - credited[metal]);
   const history = facts.lot_entries.filter((entry) => entry.lot_id === lot.id);
-  const dirt = dirtOf(history, settled, facts);
-  const rest = settled.gross - fineTotal(settled) - dirt;
+  const dirt = dirtOf(history, settled, lot, facts);
+  const difference = differenceEntries(assay_difference, history, lot, facts);
+  const gone = difference.reduce((sum, { mass }) => sum + mass.gross, dirt);
+  const rest =
+    settled.gross - gone - fineTotal(deduction) - METALS.reduce((sum, key) => sum + credited[key], 0n);
   const account = (kind: 'foreign_matter' | 'processors_deduction') => theAccount(facts, kind).id;
   const entries: EntryDraft[] = [
     entry(refiner.id, lot, negateMass(settled)),
-    ...differenceEntries(assay_difference, history, lot, facts),
+    ...difference,
     entry(account('processors_deduction'), lot, addMass(deduction, massVector({ gross: rest }))),
     entry(account('foreign_matter'), lot, massVector({ gross: dirt })),
   ];
@@ -82,6 +88,7 @@ export function settleLine(
     credited,
     deduction,
     assay_difference,
+    weighing_difference: lostOnTheWay(history, facts),
     entries: entries.filter((e) => !isZeroMass(e.mass)),
   });
 }
@@ -112,8 +119,10 @@ function findSettled(line: OutturnLine, refiner: Account, field: string, facts: 
 
 type PerMetal = Readonly<Record<Metal, Micrograms>>;
 
+/** A metal that the statement does not name was not paid for: it is taken as found, and kept by the refiner. */
 function metalsOf(
   line: OutturnLine,
+  settled: MassVector,
   field: string,
 ): Outcome<{ assayed: PerMetal; credited: PerMetal; charged: PerMetal }> {
   const seen = new Set<Metal>();
@@ -133,7 +142,8 @@ function metalsOf(
     }
   }
   const of = (key: 'assayed_g' | 'credited_g' | 'charge_g'): PerMetal => {
-    const value = (metal: Metal) => line.metals.find((row) => row.metal === metal)?.[key] ?? 0n;
+    const value = (metal: Metal) =>
+      line.metals.find((row) => row.metal === metal)?.[key] ?? (key === 'assayed_g' ? settled[metal] : 0n);
     return {
       gold: value('gold'),
       silver: value('silver'),
@@ -144,16 +154,37 @@ function metalsOf(
   return accept({ assayed: of('assayed_g'), credited: of('credited_g'), charged: of('charge_g') });
 }
 
-/** Gross that the lot drew from foreign matter and that has not gone back yet, as far as this part holds it. */
-function dirtOf(history: readonly RecordedEntry[], settled: MassVector, facts: Facts): Micrograms {
+/**
+ * Gross that the lot drew from foreign matter and that has not gone back yet: all of it with the last of the lot, so
+ * that nothing of a settled lot stays there; before that the share of this part.
+ */
+function dirtOf(history: readonly RecordedEntry[], settled: MassVector, lot: Lot, facts: Facts): Micrograms {
   const account_id = theAccount(facts, 'foreign_matter').id;
   const drawn = history.filter((e) => e.account_id === account_id).reduce((sum, e) => sum - e.mass.gross, 0n);
-  const base = settled.gross - fineTotal(settled);
   if (drawn <= 0n) return 0n;
-  return drawn < base ? drawn : base;
+  const lying = facts.holdings
+    .filter((h) => h.lot_id === lot.id && isPlace(facts.accounts.get(h.account_id)?.kind ?? 'sold'))
+    .reduce((sum, h) => sum + h.mass.gross, 0n);
+  if (lying <= settled.gross) return drawn;
+  const [share = 0n] = apportion(drawn, [settled.gross, lying - settled.gross]);
+  return share;
 }
 
-/** Who gave the estimate gets the difference: the losses by what each gave of a metal; else it is assay variance. */
+function lostOnTheWay(history: readonly RecordedEntry[], facts: Facts): MassVector {
+  if (history.some((e) => e.voucher_kind === 'outturn' && e.reversed_by === null)) return ZERO_MASS;
+  const off = history.filter(
+    (e) =>
+      e.voucher_kind === 'arrive' &&
+      e.reversed_by === null &&
+      facts.accounts.get(e.account_id)?.kind === 'count_variance',
+  );
+  return off.reduce((sum, e) => addMass(sum, e.mass), ZERO_MASS);
+}
+
+/**
+ * Who gave the estimate gets the difference, with its weight: the losses, by what each gave of a metal. Else it is assay
+ * variance, fine metal only: what was no gold weighed as much all the same.
+ */
 function differenceEntries(
   difference: MassVector,
   history: readonly RecordedEntry[],
@@ -166,7 +197,8 @@ function differenceEntries(
     if (facts.accounts.get(e.account_id)?.kind !== 'working_loss') continue;
     given.set(e.account_id, addMass(given.get(e.account_id) ?? ZERO_MASS, negateMass(e.mass)));
   }
-  if (given.size === 0) return [entry(theAccount(facts, 'assay_variance').id, lot, difference)];
+  if (given.size === 0)
+    return [entry(theAccount(facts, 'assay_variance').id, lot, { ...difference, gross: 0n })];
   const accounts = [...given.keys()];
   return METALS.flatMap((metal) => {
     const weights = accounts.map((id) => given.get(id)?.[metal] ?? 0n);
