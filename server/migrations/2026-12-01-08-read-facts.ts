@@ -111,6 +111,8 @@ export const readFacts: Migration = {
               FROM entry e JOIN record r ON r.workshop_id = w AND r.sequence = e.voucher_sequence
               WHERE e.workshop_id = w AND e.account_id = j.account_id AND e.lot_id = j.lot_id AND e.gross_ug > 0
                 AND coalesce(r.job_id, '00000000-0000-0000-0000-000000000000') = j.job_id
+                AND r.kind NOT IN ('reversal', 'correction')
+                AND NOT EXISTS (SELECT 1 FROM record v WHERE v.workshop_id = w AND v.reverses = r.id)
               ORDER BY e.voucher_sequence DESC LIMIT 1)) AS row
           FROM unnest(by_job) j`)},
         'lot_entries', ${list(`

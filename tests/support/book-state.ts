@@ -31,6 +31,9 @@ export interface Posted {
   readonly recorded_by: string | null;
 }
 
+/** What mends or mirrors brings nothing anew: metal came by what came before. */
+const UNDOES = ['reversal', 'correction'];
+
 const SETTINGS: WorkshopSettings = {
   currency: 'EUR',
   time_zone: 'Europe/Berlin',
@@ -105,7 +108,25 @@ export class BookState {
   }
 
   allJobHoldings(): readonly JobHolding[] {
-    return [...this.#jobHoldings.values()].filter((h) => !isZeroMass(h.mass));
+    return [...this.#jobHoldings.values()]
+      .filter((h) => !isZeroMass(h.mass))
+      .map((h) => ({ ...h, came_by: this.#cameBy(h) }));
+  }
+
+  /** The last voucher that put metal there for the job and was not undone. */
+  #cameBy(held: JobHolding): JobHolding['came_by'] {
+    const vouchers = this.records.flatMap(({ draft }) => (draft.type === 'voucher' ? [draft] : []));
+    const last = vouchers.findLast(
+      (voucher) =>
+        !UNDOES.includes(voucher.kind) &&
+        !vouchers.some((other) => other.reverses === voucher.id) &&
+        leaf(voucher.detail, 'job_id') === held.job_id &&
+        voucher.entries.some(
+          (entry) =>
+            entry.account_id === held.account_id && entry.lot_id === held.lot_id && entry.mass.gross > 0n,
+        ),
+    );
+    return last === undefined ? null : { kind: last.kind, operation: leaf(last.detail, 'operation') };
   }
 
   /** Posts records in order, all or none. Throws, naming the rule, where one of them is broken. */
@@ -158,11 +179,7 @@ export class BookState {
         came_by: null,
       };
       const known = this.#jobHoldings.get(jobKey) ?? blank;
-      const came_by =
-        entry.mass.gross > 0n
-          ? { kind: voucher.kind, operation: leaf(voucher.detail, 'operation') }
-          : known.came_by;
-      this.#jobHoldings.set(jobKey, { ...added(known, entry), job_id, came_by });
+      this.#jobHoldings.set(jobKey, { ...blank, ...added(known, entry) });
     }
     for (const entry of voucher.entries) this.#checkPlace(entry.account_id, entry.lot_id, voucher);
     for (const entry of voucher.entries) this.#checkDays(entry.account_id, entry.lot_id, voucher);
