@@ -13,7 +13,7 @@ import type { Micrograms } from '../../mass/micrograms.ts';
 import { printGrams } from '../../mass/micrograms.ts';
 import type { Metal } from '../../mass/vector.ts';
 import { METALS, fineTotal, massVector, negateMass } from '../../mass/vector.ts';
-import { gramsAboveZero, id, money, permille, shortText } from '../../schemas/primitives.ts';
+import { gramsAboveZero, id, money, permille, pieces, shortText } from '../../schemas/primitives.ts';
 import { z } from '../../schemas/zod.ts';
 import { netOf, weighingSchema } from '../../weighing/weighing.ts';
 import { amountSchema, drawAmount } from '../amount.ts';
@@ -23,7 +23,7 @@ import type { Actor, EventDefinition } from '../definition.ts';
 import { recordsOnly } from '../definition.ts';
 import { findLot, findParty, findPlace, partyAccount, theAccount, usableLot } from '../lookup.ts';
 import { makeVoucher, weighingRows } from '../make-voucher.ts';
-import { openLot } from '../new-lot.ts';
+import { isCounted, openLot } from '../new-lot.ts';
 import { StandingLots, claimOf, fineMetal } from './standing-lot.ts';
 
 const metal = z.enum(METALS);
@@ -48,6 +48,8 @@ const schema = z.strictObject({
       description: shortText,
       permille,
       weighing: weighingSchema,
+      /** Castings of the caster's own metal are counted too. */
+      pieces: pieces.nullable().default(null),
     }),
     z.strictObject({ way: z.literal('hand_over'), safe_id: id, lot_id: id, amount: amountSchema }),
     z.strictObject({ way: z.literal('buy'), ...deal }),
@@ -182,6 +184,12 @@ function draw(act: Extract<Act, { way: 'draw' }>, by: Settling): Outcome<Settled
   if (!safe.ok) return safe;
   const net = netOf(act.weighing, 'act.weighing');
   if (!net.ok) return net;
+  if (isCounted(act.form) !== (act.pieces !== null)) {
+    const sentence = isCounted(act.form)
+      ? 'Metal of this form is kept by pieces too. Count them.'
+      : 'Metal of this form is not kept by pieces. Leave the count empty.';
+    return refuse({ code: 'pieces_needed', field: 'act.pieces', sentence });
+  }
   const fine = fineness({ [act.metal]: act.permille });
   const mass = massFromFineness(net.value, fine);
   const opened = openLot(by.facts, by.common.business_date, {
@@ -206,7 +214,7 @@ function draw(act: Extract<Act, { way: 'draw' }>, by: Settling): Outcome<Settled
         mass: negateMass(claim),
         pieces: null,
       },
-      { account_id: safe.value.id, lot_id: opened.lot_id, mass, pieces: null },
+      { account_id: safe.value.id, lot_id: opened.lot_id, mass, pieces: act.pieces },
       baseMetal(opened.lot_id, mass[act.metal] - mass.gross, by.facts),
     ],
   });

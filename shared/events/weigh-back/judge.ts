@@ -8,7 +8,6 @@ import type { Micrograms } from '../../mass/micrograms.ts';
 import { printGrams } from '../../mass/micrograms.ts';
 import type { MassVector, Metal } from '../../mass/vector.ts';
 import { METALS, ZERO_MASS, addMass, subtractMass, sumMass } from '../../mass/vector.ts';
-import { limitOfReadings } from '../last-of-it.ts';
 import type { OutLot } from './out.ts';
 import type { Shares } from './shares.ts';
 
@@ -19,14 +18,14 @@ export interface Judged {
   readonly metal: Metal;
   /** Null where the workshop has set none. */
   readonly allowed_ug: Micrograms | null;
-  /** Two standard uncertainties of the weighings, gross. */
-  readonly limit_gross_ug: Micrograms;
-  /** The same of the judged metal. */
+  /** All that was lost, less what was found beyond the lots. */
+  readonly loss: MassVector;
+  /** Two standard uncertainties of the weighings, in the judged metal. */
   readonly limit_ug: Micrograms;
   readonly finding: Finding;
 }
 
-/** Judges the loss of a job. `readings` is the number of weighings it rests on. */
+/** Judges the loss of a job. `limit_gross_ug` is the limit of error of the weighings that it rests on. */
 export function judge(
   lots: readonly OutLot[],
   shares: Shares,
@@ -34,22 +33,34 @@ export function judge(
     readonly operation: string;
     readonly alloy: string | null;
     readonly date: string;
-    readonly readings: bigint;
+    readonly limit_gross_ug: Micrograms;
   },
   facts: Facts,
 ): Judged {
   const cameIn = lots
     .filter((out) => !out.counted_before)
     .reduce((sum, out) => addMass(sum, out.mass), ZERO_MASS);
-  const worked = subtractMass(cameIn, sumMass(shares.unused));
+  const worked = nothingBelow(subtractMass(cameIn, sumMass(shares.unused)));
   const metal = METALS.reduce((best, next) => (worked[next] > worked[best] ? next : best), 'gold');
   const allowance = allowanceOn(facts.allowances, by);
-  const base = worked[metal] > 0n ? worked[metal] : 0n;
-  const allowed_ug = allowance === null ? null : allowedLoss(allowance, base);
-  const limit_gross_ug = limitOfReadings(by.readings, facts.settings.weighing_u_ug);
-  const limit_ug = fineShare(limit_gross_ug, shares.blend, metal);
-  const finding = judgeLoss(shares.loss[metal], allowed_ug, limit_ug);
-  return { worked, metal, allowed_ug, limit_gross_ug, limit_ug, finding };
+  const allowed_ug = allowance === null ? null : allowedLoss(allowance, worked[metal]);
+  const limit_ug = fineShare(by.limit_gross_ug, shares.blend, metal);
+  const loss = subtractMass(shares.loss, sumMass(shares.more.map(({ mass }) => mass)));
+  const finding = judgeLoss(loss[metal], allowed_ug, limit_ug);
+  return { worked, metal, allowed_ug, loss, limit_ug, finding };
+}
+
+/** What came back unused may weigh a trifle more than what came in: nothing was worked then, not less. */
+function nothingBelow(mass: MassVector): MassVector {
+  const cut = (ug: Micrograms) => (ug < 0n ? 0n : ug);
+  const { gross, gold, silver, platinum, palladium } = mass;
+  return {
+    gross: cut(gross),
+    gold: cut(gold),
+    silver: cut(silver),
+    platinum: cut(platinum),
+    palladium: cut(palladium),
+  };
 }
 
 function fineShare(gross: Micrograms, blend: MassVector, metal: Metal): Micrograms {

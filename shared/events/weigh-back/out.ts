@@ -109,3 +109,11 @@ export interface ReOwned {
   readonly records: readonly RecordDraft[];
   readonly lots: readonly OutLot[];
 }
+
+/** Everything of a job that was found before anything is shared. */
+export interface Found {
+  readonly lots: readonly OutLot[];
+  readonly owner_id: string | null;
+  readonly loss_account: Account;
+  readonly destinations: readonly Account[];
+}

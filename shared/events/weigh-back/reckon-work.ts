@@ -1,37 +1,31 @@
 /** One job and operation of a weigh-back: reckoned, judged, and drafted as one voucher. */
-import type { EntryDraft, Outcome, RecordDraft } from '../../book/draft.ts';
+import type { Outcome, RecordDraft } from '../../book/draft.ts';
 import { accept, refuse } from '../../book/draft.ts';
 import { allOf } from '../../book/outcome.ts';
 import type { Account } from '../../book/account.ts';
 import { isWorkPlace } from '../../book/account.ts';
 import { printGrams } from '../../mass/micrograms.ts';
-import type { MassVector } from '../../mass/vector.ts';
-import { addMass, isZeroMass, massVector, negateMass, subtractMass, sumMass } from '../../mass/vector.ts';
+import { isZeroMass, sumMass } from '../../mass/vector.ts';
 import type { Weighing } from '../../weighing/weighing.ts';
 import { netOf } from '../../weighing/weighing.ts';
 import type { EventDraft, HandoverDraft } from '../definition.ts';
 import { handoverOf } from '../handover.ts';
-import { readingsOf } from '../last-of-it.ts';
-import { findJob, findPlace, lossAccount, theAccount } from '../lookup.ts';
+import { limitOfReadings, readingsOf } from '../last-of-it.ts';
+import { findJob, findPlace, lossAccount } from '../lookup.ts';
+import type { VoucherParts } from '../make-voucher.ts';
 import { makeVoucher, weighingRows } from '../make-voucher.ts';
 import { ownershipRecords } from '../ownership-records.ts';
+import type { Judged } from './judge.ts';
 import { judge, judgedDetail } from './judge.ts';
-import type { MadeLot, Making } from './lots-made.ts';
-import { makeLot } from './lots-made.ts';
-import type { OutLot, ReOwned } from './out.ts';
+import type { Making } from './lots-made.ts';
+import { makeAll } from './made-parts.ts';
+import type { Found, OutLot, ReOwned } from './out.ts';
 import { keptLots, outLots, ownerOf } from './out.ts';
 import type { WorkInput } from './schema.ts';
 import type { Shares, Weighed } from './shares.ts';
 import { shareOut } from './shares.ts';
 import type { Counter } from './weigh-back.ts';
-
-/** Everything of a job that was found before anything is shared. */
-interface Found {
-  readonly lots: readonly OutLot[];
-  readonly owner_id: string | null;
-  readonly loss_account: Account;
-  readonly destinations: readonly Account[];
-}
+import { dirtEntries, lossEntries, outEntries } from './work-entries.ts';
 
 /** Drafts one job. Refuses what can't have come back, and more back than out without a reason. */
 export function reckonWork(work: WorkInput, field: string, counter: Counter): Outcome<EventDraft> {
@@ -39,70 +33,38 @@ export function reckonWork(work: WorkInput, field: string, counter: Counter): Ou
   if (!found.ok) return found;
   const weighed = netsOf(work, field, counter);
   if (!weighed.ok) return weighed;
-  const shares = shareOut(found.value.lots, weighed.value);
-  if (!shares.ok) return shares;
   const { facts, common } = counter;
-  const chief = found.value.lots.reduce((best, next) => (next.mass.gross > best.mass.gross ? next : best));
-  const judged = judge(
-    found.value.lots,
-    shares.value,
-    {
-      operation: work.operation,
-      alloy: chief.lot.alloy,
-      date: common.business_date,
-      readings: weighingsOf(work).reduce((sum, weighing) => sum + readingsOf(weighing), 0n),
-    },
-    facts,
-  );
-  const surplus = -shares.value.loss.gross;
-  const moreBack = surplus > judged.limit_gross_ug;
-  if (moreBack && work.reason === null) return refuseMoreBack(found.value.lots, field, counter);
+  const readings = weighingsOf(work).reduce((sum, weighing) => sum + readingsOf(weighing), 0n);
+  const limit_gross_ug = limitOfReadings(readings, facts.settings.weighing_u_ug);
+  const slack = { limit_ug: limit_gross_ug, reasoned: work.reason !== null };
+  const shares = shareOut(found.value.lots, weighed.value, slack);
+  if (!shares.ok) return shares;
   const owned = reOwn(work, found.value, shares.value, counter);
+  const worked = workedLots(owned.lots, shares.value);
+  const chief = worked.reduce((best, next) => (next.mass.gross > best.mass.gross ? next : best)).lot;
+  const by = { operation: work.operation, alloy: chief.alloy, date: common.business_date, limit_gross_ug };
+  const judged = judge(found.value.lots, shares.value, by, facts);
+  const beyond = [-shares.value.loss.gross, ...shares.value.more.map(({ mass }) => mass.gross)];
+  const moreBack = beyond.some((surplus) => surplus > limit_gross_ug);
+  if (moreBack && work.reason === null) return refuseMoreBack(found.value.lots, field, counter);
   const making: Making = {
-    lots: owned.lots,
+    lots: worked,
     owner_id: found.value.owner_id,
-    alloy: chief.lot.alloy,
+    alloy: chief.alloy,
     business_date: common.business_date,
     facts,
   };
   const made = makeAll(work, found.value, shares.value, making, field, counter);
   if (!made.ok) return made;
-  const lossLot =
-    made.value.work[0]?.entry.lot_id ??
-    owned.lots.find((out) => out.lot.alloy === chief.lot.alloy)?.lot.id ??
-    chief.lot.id;
-  const loss: EntryDraft = {
-    account_id: found.value.loss_account.id,
-    lot_id: lossLot,
-    mass: shares.value.loss,
-    pieces: null,
-  };
+  const loss = lossEntries(made.value, chief, shares.value, found.value.loss_account);
   const all = [...made.value.unused, ...made.value.work, ...made.value.scrap, ...made.value.filings];
   const voucher = makeVoucher(facts, common, {
     kind: 'weigh_back',
-    detail: {
-      operation: work.operation,
-      bench: counter.place.id,
-      person_id: counter.place.custodian_id,
-      job_id: work.job_id,
-      owner_id: found.value.owner_id,
-      counterparty_id: counter.place.party_id,
-      ...judgedDetail(judged),
-      reason: work.reason,
-      giver_confirmed: counter.confirmed ? 'pin' : null,
-      kept: owned.lots
-        .filter((out) => out.held_for === null && work.job_id !== null)
-        .map(({ lot }) => ({ lot_id: lot.id })),
-      weighings: weighingRows(
-        weighingsOf(work).map((weighing, index) => ({ weighing, line: index + 1 })),
-        facts,
-        counter.actor,
-      ),
-    },
+    detail: workDetail(work, found.value, owned, judged, counter),
     entries: [
       ...outEntries(found.value.lots, owned, shares.value, counter),
       ...all.flatMap((part) => [part.entry]),
-      loss,
+      ...loss,
       ...dirtEntries(made.value.filings, shares.value, counter),
     ],
   });
@@ -113,6 +75,40 @@ export function reckonWork(work: WorkInput, field: string, counter: Counter): Ou
       ? `More came back from ${counter.place.name} than went out, so a second person signs.`
       : null,
   });
+}
+
+function workDetail(
+  work: WorkInput,
+  found: Found,
+  owned: ReOwned,
+  judged: Judged,
+  counter: Counter,
+): VoucherParts['detail'] {
+  const weighings = weighingsOf(work).map((weighing, index) => ({ weighing, line: index + 1 }));
+  return {
+    operation: work.operation,
+    bench: counter.place.id,
+    person_id: counter.place.custodian_id,
+    job_id: work.job_id,
+    owner_id: found.owner_id,
+    counterparty_id: counter.place.party_id,
+    ...judgedDetail(judged),
+    reason: work.reason,
+    giver_confirmed: counter.confirmed ? 'pin' : null,
+    kept: owned.lots
+      .filter((out) => out.held_for === null && work.job_id !== null)
+      .map(({ lot }) => ({ lot_id: lot.id })),
+    weighings: weighingRows(weighings, counter.facts, counter.actor),
+  };
+}
+
+/** The lots that something was made of, each with what went in; where everything came back, all that was out. */
+function workedLots(lots: readonly OutLot[], shares: Shares): readonly OutLot[] {
+  const used = lots.flatMap((out, index) => {
+    const mass = shares.consumed[index] ?? out.mass;
+    return mass.gross > 0n ? [{ ...out, mass }] : [];
+  });
+  return used.length > 0 ? used : lots;
 }
 
 function findWork(work: WorkInput, field: string, counter: Counter): Outcome<Found> {
@@ -174,118 +170,6 @@ function weighingsOf(work: WorkInput): readonly Weighing[] {
   );
 }
 
-/** House metal that goes into a customer's piece changes owner first: what is consumed of it, in a new lot. */
-function reOwn(work: WorkInput, found: Found, shares: Shares, counter: Counter): ReOwned {
-  const records: RecordDraft[] = [];
-  const lots = found.lots.map((out, index) => {
-    const consumed = shares.consumed[index] ?? out.mass;
-    if (out.lot.owner_id === found.owner_id || isZeroMass(consumed)) return out;
-    const changed = ownershipRecords(counter.facts, counter.common, counter.actor, {
-      place: counter.place,
-      lot: out.lot,
-      mass: consumed,
-      pieces: null,
-      weighing: null,
-      new_owner_id: found.owner_id,
-      what_for: work.reason ?? 'worked into the owner’s piece',
-      job_id: out.held_for,
-    });
-    records.push(...changed.records);
-    return { ...out, lot: changed.lot };
-  });
-  return { records, lots };
-}
-
-interface AllMade {
-  readonly unused: readonly MadeLot[];
-  readonly work: readonly MadeLot[];
-  readonly scrap: readonly MadeLot[];
-  readonly filings: readonly MadeLot[];
-}
-
-function makeAll(
-  work: WorkInput,
-  found: Found,
-  shares: Shares,
-  making: Making,
-  field: string,
-  counter: Counter,
-): Outcome<AllMade> {
-  const { safe, place } = counter;
-  const nothing = { pieces: null, into_lot_id: null };
-  const unused = work.unused.map((line, i) => ({
-    records: [],
-    entry: {
-      account_id: safe.id,
-      lot_id: line.lot_id,
-      mass: shares.unused[i] ?? massVector({}),
-      pieces: line.pieces,
-    },
-  }));
-  const made = allOf(
-    work.made.map((line, i) =>
-      makeLot(
-        {
-          ...nothing,
-          form: line.form,
-          description: line.description,
-          pieces: line.pieces,
-          mass: shares.made[i] ?? massVector({}),
-          place: found.destinations[i] ?? place,
-          field: `${field}.made.${i}`,
-        },
-        making,
-      ),
-    ),
-  );
-  const scrap = allOf(
-    work.scrap.map((line, i) => {
-      const cut = found.lots.find((out) => out.lot.id === line.from_lot_id);
-      const from =
-        cut === undefined
-          ? making
-          : { ...making, lots: [cut], owner_id: cut.lot.owner_id, alloy: cut.lot.alloy };
-      const description = `${from.alloy ?? 'Mixed'} scrap`;
-      return makeLot(
-        {
-          ...nothing,
-          form: 'clean_scrap',
-          description,
-          mass: shares.scrap[i] ?? massVector({}),
-          place: safe,
-          into_lot_id: line.into_lot_id,
-          field: `${field}.scrap.${i}.into_lot_id`,
-        },
-        from,
-      );
-    }),
-  );
-  const filings = allOf(
-    work.filings.map((line, i) => {
-      const share = shares.filings[i];
-      const mass =
-        share === undefined ? massVector({}) : addMass(share.metal, massVector({ gross: share.dirt_ug }));
-      const description = `${making.alloy ?? 'Mixed'} filings, ${place.name}`;
-      return makeLot(
-        {
-          ...nothing,
-          form: 'filings',
-          description,
-          mass,
-          place: safe,
-          into_lot_id: line.into_lot_id,
-          field: `${field}.filings.${i}.into_lot_id`,
-        },
-        making,
-      );
-    }),
-  );
-  const all = allOf([made, scrap, filings]);
-  if (!all.ok) return all;
-  const [m = [], s = [], f = []] = all.value;
-  return accept({ unused, work: m, scrap: s, filings: f });
-}
-
 /** Lots that are counted come back by count too; and no more pieces than went out. */
 function checkPieces(work: WorkInput, lots: readonly OutLot[], field: string): Outcome<null> {
   for (const [index, line] of work.unused.entries()) {
@@ -305,38 +189,6 @@ function checkPieces(work: WorkInput, lots: readonly OutLot[], field: string): O
     }
   }
   return accept(null);
-}
-
-/** What leaves the place: each lot that was out, the consumed part in the lot that it stands in now. */
-function outEntries(
-  before: readonly OutLot[],
-  owned: ReOwned,
-  shares: Shares,
-  counter: Counter,
-): readonly EntryDraft[] {
-  const out = (lot_id: string, mass: MassVector, pieces: bigint | null): EntryDraft => ({
-    account_id: counter.place.id,
-    lot_id,
-    mass: negateMass(mass),
-    pieces: pieces === null ? null : -pieces,
-  });
-  return before.flatMap((lot, index) => {
-    const now = owned.lots[index] ?? lot;
-    if (now.lot.id === lot.lot.id) return [out(lot.lot.id, lot.mass, lot.pieces)];
-    const consumed = shares.consumed[index] ?? lot.mass;
-    return [out(lot.lot.id, subtractMass(lot.mass, consumed), lot.pieces), out(now.lot.id, consumed, null)];
-  });
-}
-
-/** The dirt in filings is no metal of the house: its gross comes from foreign matter, in the filings' name. */
-function dirtEntries(filings: readonly MadeLot[], shares: Shares, counter: Counter): readonly EntryDraft[] {
-  const account_id = theAccount(counter.facts, 'foreign_matter').id;
-  return filings.map((part, index) => ({
-    account_id,
-    lot_id: part.entry.lot_id,
-    mass: massVector({ gross: -(shares.filings[index]?.dirt_ug ?? 0n) }),
-    pieces: null,
-  }));
 }
 
 /** Work that goes on to another person waits there for an acknowledgement. */
@@ -362,4 +214,26 @@ function refuseMoreBack(lots: readonly OutLot[], field: string, counter: Counter
   const out = printGrams(sumMass(lots.map(({ mass }) => mass)).gross, 3);
   const sentence = `${counter.place.name} holds ${out} g for this job. More can’t come back than went out. Weigh again, or give a reason and a second signature.`;
   return refuse({ code: 'more_back', field: `${field}.made`, sentence });
+}
+
+/** House metal that goes into a customer's piece changes owner first: what is consumed of it, in a new lot. */
+function reOwn(work: WorkInput, found: Found, shares: Shares, counter: Counter): ReOwned {
+  const records: RecordDraft[] = [];
+  const lots = found.lots.map((out, index) => {
+    const consumed = shares.consumed[index] ?? out.mass;
+    if (out.lot.owner_id === found.owner_id || isZeroMass(consumed)) return out;
+    const changed = ownershipRecords(counter.facts, counter.common, counter.actor, {
+      place: counter.place,
+      lot: out.lot,
+      mass: consumed,
+      pieces: null,
+      weighing: null,
+      new_owner_id: found.owner_id,
+      what_for: work.reason ?? 'worked into the owner’s piece',
+      job_id: out.held_for,
+    });
+    records.push(...changed.records);
+    return { ...out, lot: changed.lot };
+  });
+  return { records, lots };
 }

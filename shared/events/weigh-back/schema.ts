@@ -1,4 +1,4 @@
-/** What is entered at a weigh-back: a place, and for each job and operation what came back, stays or was made. */
+/** What is entered at a weigh-back: a place, for each job and operation what came back or was made, and what stays. */
 import { id, longText, permille, pieces, shortText } from '../../schemas/primitives.ts';
 import { z } from '../../schemas/zod.ts';
 import { weighingSchema } from '../../weighing/weighing.ts';
@@ -54,20 +54,44 @@ const workSchema = z.strictObject({
   reason: longText.nullable().default(null),
 });
 
-export const weighBackSchema = z.strictObject({
+/** What stays at the place for the night: weighed, or in a sealed box or locked drawer that is named. */
+const overnightSchema = z.discriminatedUnion('how', [
+  z.strictObject({
+    how: z.literal('weighed'),
+    description: shortText,
+    weighing: weighingSchema,
+    pieces: pieces.nullable().default(null),
+  }),
+  z.strictObject({
+    how: z.enum(['sealed_box', 'locked_drawer']),
+    description: shortText,
+    pieces: pieces.nullable().default(null),
+  }),
+]);
+
+const fields = z.strictObject({
   ...commonFields,
   place_id: id,
   safe_id: id,
+  overnight: z
+    .array(overnightSchema)
+    .max(30, 'At most 30 lines stay for a night. Weigh some together.')
+    .default([]),
   works: z
     .array(workSchema)
-    .min(1, 'Nothing is weighed yet. Choose the job that comes back.')
-    .max(20, 'At most 20 jobs go into one weigh-back. Post the rest in another.'),
+    .max(20, 'At most 20 jobs go into one weigh-back. Post the rest in another.')
+    .default([]),
   /** The goldsmith's PIN, given at the counter beside the same figures; checked by the server, kept nowhere. */
   pin: z
     .string()
     .regex(/^\d{4,8}$/, 'A PIN has 4 to 8 figures.')
     .nullable()
     .default(null),
+});
+
+export const weighBackSchema = fields.refine((input) => input.works.length + input.overnight.length > 0, {
+  path: ['works'],
+  message: 'Nothing is weighed yet. Choose the job that comes back, or name what stays for the night.',
 });
 
 export type WeighBackInput = z.output<typeof weighBackSchema>;

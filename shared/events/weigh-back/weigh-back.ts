@@ -4,7 +4,7 @@
  */
 import type { Account } from '../../book/account.ts';
 import { WORK_KINDS } from '../../book/account.ts';
-import type { Outcome } from '../../book/draft.ts';
+import type { Outcome, RecordDraft } from '../../book/draft.ts';
 import { accept, refuse } from '../../book/draft.ts';
 import { allOf } from '../../book/outcome.ts';
 import type { Facts } from '../../book/facts.ts';
@@ -12,6 +12,7 @@ import type { Common } from '../common-fields.ts';
 import { readCommon } from '../common-fields.ts';
 import type { Actor, EventDefinition, EventDraft } from '../definition.ts';
 import { findPlace } from '../lookup.ts';
+import { overnight } from './overnight.ts';
 import { reckonWork } from './reckon-work.ts';
 import type { WeighBackInput } from './schema.ts';
 import { weighBackSchema } from './schema.ts';
@@ -57,7 +58,8 @@ export const weighBack: EventDefinition<WeighBackInput> = {
     if (!once.ok) return once;
     const works = allOf(input.works.map((work, index) => reckonWork(work, `works.${index}`, counter.value)));
     if (!works.ok) return works;
-    return accept(together(works.value));
+    const stays = overnight(input, counter.value);
+    return stays.ok ? accept(together(works.value, stays.value)) : stays;
   },
 };
 
@@ -94,10 +96,10 @@ function eachOnce(input: WeighBackInput): Outcome<null> {
   return accept(null);
 }
 
-function together(works: readonly EventDraft[]): EventDraft {
+function together(works: readonly EventDraft[], stays: readonly RecordDraft[]): EventDraft {
   const reasons = works.flatMap((work) => work.second_signature ?? []);
   return {
-    records: works.flatMap((work) => work.records),
+    records: [...works.flatMap((work) => work.records), ...stays],
     handovers: works.flatMap((work) => work.handovers),
     second_signature: reasons[0] ?? null,
   };
