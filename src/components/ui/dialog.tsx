@@ -1,0 +1,33 @@
+/** A dialog: a question that names the thing, what will be in the book afterwards, a quiet way back. */
+import type { ReactNode } from 'react';
+import { useEffect, useRef } from 'react';
+import { Button } from './button.tsx';
+
+interface DialogProps {
+  readonly title: string;
+  readonly open: boolean;
+  /** The quiet button's words: "Keep it". */
+  readonly keep: string;
+  readonly onClose: () => void;
+  readonly children: ReactNode;
+  readonly action: ReactNode;
+}
+
+export function Dialog({ title, open, keep, onClose, children, action }: DialogProps) {
+  const dialog = useRef<HTMLDialogElement>(null);
+  useEffect(() => {
+    const element = dialog.current;
+    if (open && element !== null && !element.open) element.showModal();
+    if (!open) element?.close();
+  }, [open]);
+  return (
+    <dialog ref={dialog} className="sheet-dialog" aria-label={title} onClose={onClose}>
+      <h2>{title}</h2>
+      {children}
+      <div className="dialog-actions">
+        <Button onPress={onClose}>{keep}</Button>
+        {action}
+      </div>
+    </dialog>
+  );
+}

@@ -1,0 +1,58 @@
+import react from '@vitejs/plugin-react';
+import { defineConfig } from 'vitest/config';
+
+const api = `http://127.0.0.1:${process.env['API_PORT'] ?? '4180'}`;
+
+export default defineConfig({
+  plugins: [react()],
+  build: { outDir: 'dist', license: true, assetsInlineLimit: 0 },
+  server: {
+    host: '127.0.0.1',
+    strictPort: true,
+    proxy: { '/api': api, '/mail': api },
+    watch: { ignored: ['**/.grainward/**'] },
+  },
+  test: {
+    projects: [
+      {
+        extends: true,
+        test: {
+          name: 'unit',
+          environment: 'node',
+          include: ['tests/unit/**/*.test.ts', 'tests/standards/**/*.test.ts'],
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'client',
+          environment: 'jsdom',
+          include: ['tests/client/**/*.test.{ts,tsx}'],
+          setupFiles: ['tests/client/setup.ts'],
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'server',
+          environment: 'node',
+          include: ['tests/{api,database,faults,dossier,seed}/**/*.test.ts'],
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+          maxWorkers: 2,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'browser',
+          environment: 'node',
+          include: ['tests/browser/**/*.test.ts'],
+          testTimeout: 120_000,
+          hookTimeout: 180_000,
+          maxWorkers: 1,
+        },
+      },
+    ],
+  },
+});
