@@ -52,7 +52,8 @@ const schema = z.strictObject({
       pieces: pieces.nullable().default(null),
     }),
     z.strictObject({ way: z.literal('hand_over'), safe_id: id, lot_id: id, amount: amountSchema }),
-    z.strictObject({ way: z.literal('buy'), ...deal }),
+    /** Bought, or metal that was drawn is fixed: who sold it is a supplier of the workshop. */
+    z.strictObject({ way: z.literal('buy'), supplier_id: id, ...deal }),
     z.strictObject({ way: z.literal('sell'), ...deal }),
     z.strictObject({ way: z.literal('move'), metal, mass_g: gramsAboveZero, to_account_id: id }),
   ]),
@@ -82,6 +83,7 @@ export const settle: EventDefinition<SettleInput> = {
     place_ids: act.way === 'move' ? [account_id, act.to_account_id] : [account_id],
     account_ids: 'safe_id' in act ? [act.safe_id] : [],
     lot_ids: act.way === 'hand_over' ? [act.lot_id] : [],
+    party_ids: act.way === 'buy' ? [act.supplier_id] : [],
     document_ids,
   }),
   draft(input, facts, actor) {
@@ -124,9 +126,9 @@ function carryOut(act: Act, by: Settling): Outcome<Settled> {
     case 'hand_over':
       return handOver(act, by);
     case 'buy': {
-      const party = findParty(by.facts, by.account.party_id ?? '', 'account_id');
+      const party = findParty(by.facts, act.supplier_id, 'act.supplier_id');
       if (!party.ok) return party;
-      const supplier = partyAccount(by.facts, party.value, 'supplier', 'account_id');
+      const supplier = partyAccount(by.facts, party.value, 'supplier', 'act.supplier_id');
       return supplier.ok ? between(supplier.value, by.account, act, by) : supplier;
     }
     case 'sell':
@@ -303,6 +305,7 @@ function actDetail(act: Act, facts: Facts, actor: Actor) {
     metal: 'metal' in act ? act.metal : null,
     mass_g: 'mass_g' in act ? printGrams(act.mass_g) : null,
     price_per_ozt: 'price_per_ozt' in act ? (act.price_per_ozt?.toFixed() ?? null) : null,
+    supplier_id: act.way === 'buy' ? act.supplier_id : null,
     reference: 'reference' in act ? act.reference : null,
     weighings: weighingRows([{ weighing, line: 1 }], facts, actor),
   };
