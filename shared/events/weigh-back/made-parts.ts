@@ -17,86 +17,76 @@ export interface AllMade {
   readonly filings: readonly MadeLot[];
 }
 
+/** What the parts of a job are made from. */
+interface Parts {
+  readonly work: WorkInput;
+  readonly found: Found;
+  readonly shares: Shares;
+  readonly making: Making;
+  readonly field: string;
+  readonly counter: Counter;
+}
+
+const NOTHING = massVector({});
+
 /** Makes the lots of a job. Refuses a tray that is not like what goes into it. */
-export function makeAll(
-  work: WorkInput,
-  found: Found,
-  shares: Shares,
-  making: Making,
-  field: string,
-  counter: Counter,
-): Outcome<AllMade> {
-  const { safe, place } = counter;
-  const nothing = { pieces: null, into_lot_id: null };
-  const unused = work.unused.map((line, i) => ({
+export function makeAll(parts: Parts): Outcome<AllMade> {
+  const { work, shares, counter } = parts;
+  const unused = work.unused.map(({ lot_id, pieces }, i) => ({
     records: [],
-    entry: {
-      account_id: safe.id,
-      lot_id: line.lot_id,
-      mass: shares.unused[i] ?? massVector({}),
-      pieces: line.pieces,
-    },
+    entry: { account_id: counter.safe.id, lot_id, mass: shares.unused[i] ?? NOTHING, pieces },
   }));
-  const made = allOf(
-    work.made.map((line, i) =>
-      makeLot(
-        {
-          ...nothing,
-          form: line.form,
-          description: line.description,
-          pieces: line.pieces,
-          mass: shares.made[i] ?? massVector({}),
-          place: found.destinations[i] ?? place,
-          field: `${field}.made.${i}`,
-        },
-        making,
-      ),
-    ),
-  );
-  const scrap = allOf(
-    work.scrap.map((line, i) => {
-      const cut = found.lots.find((out) => out.lot.id === line.from_lot_id);
-      const from =
-        cut === undefined
-          ? making
-          : { ...making, lots: [cut], owner_id: cut.lot.owner_id, alloy: cut.lot.alloy };
-      const description = `${from.alloy ?? 'Mixed'} scrap`;
-      return makeLot(
-        {
-          ...nothing,
-          form: 'clean_scrap',
-          description,
-          mass: shares.scrap[i] ?? massVector({}),
-          place: safe,
-          into_lot_id: line.into_lot_id,
-          field: `${field}.scrap.${i}.into_lot_id`,
-        },
-        from,
-      );
-    }),
-  );
-  const filings = allOf(
-    work.filings.map((line, i) => {
-      const share = shares.filings[i];
-      const mass =
-        share === undefined ? massVector({}) : addMass(share.metal, massVector({ gross: share.dirt_ug }));
-      const description = `${making.alloy ?? 'Mixed'} filings, ${place.name}`;
-      return makeLot(
-        {
-          ...nothing,
-          form: 'filings',
-          description,
-          mass,
-          place: safe,
-          into_lot_id: line.into_lot_id,
-          field: `${field}.filings.${i}.into_lot_id`,
-        },
-        making,
-      );
-    }),
-  );
-  const all = allOf([made, scrap, filings]);
+  const all = allOf([madeLots(parts), scrapLots(parts), filingsLots(parts)]);
   if (!all.ok) return all;
-  const [m = [], s = [], f = []] = all.value;
-  return accept({ unused, work: m, scrap: s, filings: f });
+  const [made = [], scrap = [], filings = []] = all.value;
+  return accept({ unused, work: made, scrap, filings });
+}
+
+function madeLots({ work, found, shares, making, field, counter }: Parts): Outcome<readonly MadeLot[]> {
+  return allOf(
+    work.made.map(({ form, description, pieces }, i) => {
+      const mass = shares.made[i] ?? NOTHING;
+      const place = found.destinations[i] ?? counter.place;
+      const part = { form, description, pieces, mass, place, into_lot_id: null, field: `${field}.made.${i}` };
+      return makeLot(part, making);
+    }),
+  );
+}
+
+/** Scrap is of the lot that it was cut from, in alloy and owner too. */
+function scrapLots({ work, found, shares, making, field, counter }: Parts): Outcome<readonly MadeLot[]> {
+  return allOf(
+    work.scrap.map(({ from_lot_id, into_lot_id }, i) => {
+      const cut = found.lots.find(({ lot }) => lot.id === from_lot_id);
+      const { alloy, owner_id } = cut?.lot ?? making;
+      const part = {
+        form: 'clean_scrap' as const,
+        description: `${alloy ?? 'Mixed'} scrap`,
+        mass: shares.scrap[i] ?? NOTHING,
+        pieces: null,
+        place: counter.safe,
+        into_lot_id,
+        field: `${field}.scrap.${i}.into_lot_id`,
+      };
+      return makeLot(part, { ...making, lots: cut === undefined ? making.lots : [cut], alloy, owner_id });
+    }),
+  );
+}
+
+function filingsLots({ work, shares, making, field, counter }: Parts): Outcome<readonly MadeLot[]> {
+  return allOf(
+    work.filings.map(({ into_lot_id }, i) => {
+      const share = shares.filings[i] ?? { metal: NOTHING, dirt_ug: 0n };
+      const part = {
+        form: 'filings' as const,
+        description: `${making.alloy ?? 'Mixed'} filings, ${counter.place.name}`,
+        mass: addMass(share.metal, massVector({ gross: share.dirt_ug })),
+        pieces: null,
+        place: counter.safe,
+        into_lot_id,
+        field: `${field}.filings.${i}.into_lot_id`,
+      };
+      return makeLot(part, making);
+    }),
+  );
 }

@@ -54,7 +54,7 @@ export function reckonWork(work: WorkInput, field: string, counter: Counter): Ou
     business_date: common.business_date,
     facts,
   };
-  const made = makeAll(work, found.value, shares.value, making, field, counter);
+  const made = makeAll({ work, found: found.value, shares: shares.value, making, field, counter });
   if (!made.ok) return made;
   const loss = lossEntries(made.value, chief, shares.value, found.value.loss_account);
   const all = [...made.value.unused, ...made.value.work, ...made.value.scrap, ...made.value.filings];
