@@ -165,12 +165,13 @@ describe('the chain of the main job', () => {
       (e: { account_kind: string; gross_g: string; gold_g: string }) =>
         `${e.account_kind} ${e.gross_g} ${e.gold_g}`,
     );
-    // Foreign matter gets back the 49.76825 g that it gave, as far as the drum still holds it: 49.999 − 0.231745.
+    // Foreign matter gets back the 49.76825 g that it gave; the 0.000995 g of dust lost on the way is the deduction's:
+    // 0.0025 − 0.000995.
     expect(rows).toEqual([
       'refiner -49.999000 -0.231745',
       'working_loss -0.018255 -0.018255',
-      'processors_deduction 0.002500 0.002500',
-      'foreign_matter 49.767255 0.000000',
+      'processors_deduction 0.001505 0.002500',
+      'foreign_matter 49.768250 0.000000',
       'metal_account 0.247500 0.247500',
     ]);
   });
