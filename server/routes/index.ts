@@ -8,6 +8,7 @@ import { registerRoutes } from './registers.ts';
 import type { Route } from './route.ts';
 import { sessionRoutes } from './session.ts';
 import { signatureRoutes } from './signatures.ts';
+import { todayRoutes } from './today.ts';
 
 export const routes: readonly Route[] = [
   ...healthRoutes,
@@ -18,4 +19,5 @@ export const routes: readonly Route[] = [
   ...metalRequestRoutes,
   ...registerRoutes,
   ...lotAndVoucherRoutes,
+  ...todayRoutes,
 ];

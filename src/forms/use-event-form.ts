@@ -4,7 +4,8 @@
  *
  *   const form = useEventForm({ event: 'hold', name: `hold-${lot.id}`, initial: { reason: '' },
  *     toBody: (values) => ({ lot_id: lot.id, reason: values.reason }) });
- *   <TextField label="Reason" {...form.text('reason')} error={form.errorOf('reason')} />
+ *   <TextField label="Reason" value={form.values.reason} onChange={(reason) => form.set({ reason })}
+ *     error={form.errorOf('reason')} />
  */
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
@@ -104,8 +105,9 @@ export function useEventForm<Values extends object>(options: EventFormOptions<Va
     } catch (error) {
       setFlags({ busy: false, offline: error instanceof OfflineError, tried: true });
       setRefused(errorsOf(error));
-      if (error instanceof ApiProblem) {
-        // The server has answered: what is sent next is another request.
+      if (error instanceof ApiProblem && error.isRefusal) {
+        // The server has refused: what is sent next is another request. After a fault of its own, whether it was
+        // recorded can't be known, so the same key goes again.
         setState((before) => ({ ...before, key: newKey() }));
         await client.invalidateQueries({ queryKey: keys.book });
       }

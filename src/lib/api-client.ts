@@ -25,6 +25,11 @@ export class ApiProblem extends Error {
     this.status = read.status;
     this.errors = read.errors;
   }
+
+  /** Whether the server decided against it; otherwise it may have been recorded before something failed. */
+  get isRefusal(): boolean {
+    return this.status < 500;
+  }
 }
 
 /** The server could not be reached: what was typed is kept, and the same request may be sent again. */
@@ -66,7 +71,7 @@ function readProblem(text: string, status: number): z.output<typeof problem> {
   try {
     return problem.parse(JSON.parse(text));
   } catch {
-    const detail = 'The server did not answer as it should. Nothing was posted; try again in a moment.';
+    const detail = 'The server did not answer as it should. What you typed is kept; send it again, it is recorded once.';
     return { type: '/problems/unavailable', title: '', status, detail, errors: [] };
   }
 }

@@ -1,5 +1,6 @@
 /** Buttons: verb and object. One primary per screen; one that is not possible yet can be focused and says why. */
 import type { ReactNode } from 'react';
+import { useId, useState } from 'react';
 import { Link } from 'react-router-dom';
 import type { IconName } from './icon.tsx';
 import { Icon } from './icon.tsx';
@@ -16,7 +17,7 @@ export interface ButtonProps extends Look {
   readonly submit?: boolean;
   /** Words while sending: a second press does nothing. */
   readonly busy?: string | false;
-  /** Why it is not possible yet. */
+  /** Why it is not possible yet: read out with the button, and shown where it is pressed or focused. */
   readonly notYet?: string | null;
   readonly pressed?: boolean;
 }
@@ -24,22 +25,37 @@ export interface ButtonProps extends Look {
 const look = ({ kind = 'plain', counter = false }: Look) => `btn ${kind} ${counter ? 'counter' : ''}`;
 
 export function Button(props: ButtonProps) {
-  const { children, icon, onPress, submit = false, busy = false, notYet = null } = props;
+  const { children, icon, onPress, submit = false, busy = false, notYet = null, pressed } = props;
+  const [asked, setAsked] = useState(false);
+  const why = useId();
   const still = busy !== false || notYet !== null;
-  return (
+  const button = (
     <button
       type={submit ? 'submit' : 'button'}
       className={look(props)}
       aria-disabled={still || undefined}
-      title={notYet ?? undefined}
+      aria-pressed={pressed}
+      aria-describedby={notYet === null ? undefined : why}
+      onFocus={() => setAsked(true)}
+      onBlur={() => setAsked(false)}
       onClick={(event) => {
-        if (still) event.preventDefault();
-        else onPress?.();
+        if (!still) onPress?.();
+        else event.preventDefault();
+        setAsked(true);
       }}
     >
       {icon === undefined ? null : <Icon name={icon} size={20} />}
       {busy === false ? children : busy}
     </button>
+  );
+  if (notYet === null) return button;
+  return (
+    <span className="not-yet">
+      {button}
+      <span id={why} className={asked ? 'why' : 'sr-only'}>
+        {notYet}
+      </span>
+    </span>
   );
 }
 

@@ -1,5 +1,6 @@
 /** A decision: radio rows with the whole row as target, and what each will do in a second line. */
 import { useId } from 'react';
+import { Icon } from './icon.tsx';
 
 export interface Choice<Value extends string> {
   readonly value: Value;
@@ -24,9 +25,18 @@ export function Choices<Value extends string>({
 }: ChoicesProps<Value>) {
   const name = useId();
   return (
-    <fieldset className="choices">
+    <fieldset
+      className="choices"
+      data-error={error || undefined}
+      aria-describedby={error ? `${name}-error` : undefined}
+    >
       <legend>{legend}</legend>
-      {error ? <p className="rouge">{error}</p> : null}
+      {error ? (
+        <p className="choices-error" id={`${name}-error`}>
+          <Icon name="bad" size={18} />
+          <span>{error}</span>
+        </p>
+      ) : null}
       {choices.map((choice) => (
         <label key={choice.value} className="choice">
           <input

@@ -1,9 +1,12 @@
-/** Metals side by side by fineness, with their patterns; names and figures under it. */
-import { METALS } from '../../../shared/mass/vector.ts';
-import { gramsFigure, isNothing } from '../../lib/formats.ts';
+/**
+ * Metals side by side by fineness, with their patterns; names and figures under their parts. Parts too thin for their
+ * names are named in a line beneath instead.
+ */
 import { gramsText } from '../../../shared/mass/grams-text.ts';
+import { METALS } from '../../../shared/mass/vector.ts';
+import { ugFigure } from '../../lib/formats.ts';
 import type { Drawn } from './metal-key.tsx';
-import { MetalPattern, Swatch, metalName } from './metal-key.tsx';
+import { Swatch, metalName } from './metal-key.tsx';
 
 export interface Masses {
   readonly gross_g: string;
@@ -13,60 +16,66 @@ export interface Masses {
   readonly palladium_g: string;
 }
 
-const WIDTH = 1000;
+interface Part {
+  readonly metal: Drawn;
+  readonly ug: bigint;
+  /** Tenths of a per mille of gross, rounded to the nearest. */
+  readonly tenths: bigint;
+}
+
+const THIN = 400n;
 
 export function CompositionBar({ masses }: { readonly masses: Masses }) {
   const gross = gramsText(masses.gross_g);
   if (gross <= 0n) return null;
+  const parts = partsOf(masses, gross);
+  const thin = parts.filter((part) => part.tenths < THIN);
+  const words = parts.map(({ metal, tenths }) => `${metalName(metal)} ${perThousand(tenths)}`).join(', ');
+  return (
+    <div className="composition" role="group" aria-label={`Per thousand: ${words}`}>
+      <div className="composition-bar">
+        {parts.map((part) => (
+          <div key={part.metal} className="composition-part" style={{ flexGrow: part.tenths.toString() }}>
+            <div className={`composition-ground ${part.metal}`} />
+            {part.tenths < THIN ? null : <Named part={part} />}
+          </div>
+        ))}
+      </div>
+      {thin.length === 0 ? null : (
+        <div className="composition-names">
+          {thin.map((part) => (
+            <span key={part.metal}>
+              <Swatch metal={part.metal} /> <Named part={part} />
+            </span>
+          ))}
+        </div>
+      )}
+    </div>
+  );
+}
+
+function Named({ part }: { readonly part: Part }) {
+  return (
+    <>
+      <b>{`${metalName(part.metal)} ${perThousand(part.tenths)}`}</b>{' '}
+      <span className="composition-mass">{`${ugFigure(part.ug)} g`}</span>
+    </>
+  );
+}
+
+function partsOf(masses: Masses, gross: bigint): readonly Part[] {
   const fine = METALS.map((metal) => ({ metal, ug: gramsText(masses[`${metal}_g`]) }));
   const base = gross - fine.reduce((sum, part) => sum + part.ug, 0n);
   const all: readonly { readonly metal: Drawn; readonly ug: bigint }[] = [
     ...fine,
     { metal: 'base', ug: base },
   ];
-  const parts = all.filter((part) => part.ug > 0n);
-  const shares = parts.map(({ metal, ug }) => ({ metal, ug, permille: ((ug * 10_000n) / gross).toString() }));
-  return (
-    <div>
-      <svg
-        className="chart"
-        viewBox={`0 0 ${WIDTH} 36`}
-        preserveAspectRatio="none"
-        height="36"
-        role="img"
-        aria-label={shares
-          .map(({ metal, permille }) => `${metalName(metal)} ${perThousand(permille)}`)
-          .join(', ')}
-      >
-        {shares.map(({ metal, permille }, index) => {
-          const before = shares
-            .slice(0, index)
-            .reduce((sum, share) => sum + Number.parseInt(share.permille, 10), 0);
-          const width = Number.parseInt(permille, 10) / 10;
-          return (
-            <g key={metal} transform={`translate(${before / 10} 0)`}>
-              <MetalPattern metal={metal} width={width} height={36} />
-            </g>
-          );
-        })}
-      </svg>
-      <div className="composition-names">
-        {shares.map(({ metal, permille }) => (
-          <span key={metal}>
-            <Swatch metal={metal} /> <b>{`${metalName(metal)} ${perThousand(permille)}`}</b>{' '}
-            {metal === 'base' || isNothing(masses[`${metal}_g`])
-              ? null
-              : `${gramsFigure(masses[`${metal}_g`])} g`}
-          </span>
-        ))}
-      </div>
-    </div>
-  );
+  return all
+    .filter((part) => part.ug > 0n)
+    .map((part) => ({ ...part, tenths: (part.ug * 20_000n + gross) / (gross * 2n) }));
 }
 
 /** Tenths of a per mille as it is written: "750.4", "750". */
-function perThousand(tenths: string): string {
-  const padded = tenths.padStart(2, '0');
-  const decimal = padded.slice(-1);
-  return decimal === '0' ? padded.slice(0, -1) : `${padded.slice(0, -1)}.${decimal}`;
+function perThousand(tenths: bigint): string {
+  return tenths % 10n === 0n ? `${tenths / 10n}` : `${tenths / 10n}.${tenths % 10n}`;
 }

@@ -31,7 +31,7 @@ export function Field({
     (part) => part !== null,
   );
   return (
-    <div className="field">
+    <div className="field" data-error={error || undefined}>
       <label htmlFor={id}>{label}</label>
       {hint === undefined ? null : (
         <span className="hint" id={`${id}-hint`}>
@@ -41,7 +41,7 @@ export function Field({
       {error ? (
         <span className="error" id={`${id}-error`}>
           <Icon name="bad" size={18} />
-          {error}
+          <span>{error}</span>
         </span>
       ) : null}
       <div className={`control ${figure ? 'figure' : ''} ${error ? 'fault' : ''}`}>

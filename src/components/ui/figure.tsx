@@ -19,7 +19,7 @@ export function Figure({
     <span className={`fig-${size} ${rouge ? 'rouge' : ''}`}>
       {whole}
       {decimals === undefined ? null : <span className="dec">.{decimals}</span>}
-      {unit === undefined ? null : <span className="unit">{unit}</span>}
+      {unit === undefined ? null : <span className="unit"> {unit}</span>}
     </span>
   );
 }

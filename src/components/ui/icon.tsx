@@ -1,5 +1,9 @@
-/** The marks of the sprite, always beside a word. The sprite is put into the page once, by `IconSprite`. */
+/**
+ * The marks of the sprite, always beside a word. The sprite and the drawn grounds are put into the page once, by
+ * `IconSprite`.
+ */
 import sprite from '../../assets/icons.svg?raw';
+import { Patterns } from './patterns.tsx';
 
 export const ICONS = [
   'safe',
@@ -47,7 +51,12 @@ export const ICONS = [
 export type IconName = (typeof ICONS)[number];
 
 export function IconSprite() {
-  return <div hidden dangerouslySetInnerHTML={{ __html: sprite }} />;
+  return (
+    <>
+      <div hidden dangerouslySetInnerHTML={{ __html: sprite }} />
+      <Patterns />
+    </>
+  );
 }
 
 export function Icon({ name, size = 18 }: { readonly name: IconName; readonly size?: number }) {

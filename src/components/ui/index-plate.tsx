@@ -1,7 +1,10 @@
 /**
  * The pointer scale of a balance, for every figure that has a limit: level axis, a zone that is allowed, hatch beyond
- * it, a blade at the value. The finding is said in words; the drawing only helps.
+ * it, level lines for the limit of error, a blade at the value. The finding is said in words; the drawing only helps.
  */
+import { scaleLinear } from 'd3-scale';
+import { ground } from './patterns.tsx';
+
 interface IndexPlateProps {
   /** Value and limit in the same unit; plain numbers, for drawing only. */
   readonly value: number;
@@ -9,61 +12,96 @@ interface IndexPlateProps {
   /** Both ways from nothing (a difference) or from nothing upwards (a loss). */
   readonly both?: boolean;
   readonly limitName: string;
+  /** The limit of error about nothing, in the same unit, where one is known. */
+  readonly error?: number | null;
   /** The whole finding: "Loss of 0.441 g, inside the allowance of 0.526 g". */
   readonly finding: string;
 }
 
 const WIDTH = 560;
-const LEFT = 20;
-const SPAN = WIDTH - 2 * LEFT;
+const LEFT = 22;
+const AXIS = 40;
 
-export function IndexPlate({ value, limit, both = false, limitName, finding }: IndexPlateProps) {
-  const far = Math.max(limit * 2, Math.abs(value) * 1.15, 0.001);
-  const from = both ? -far : 0;
-  const x = (at: number) => LEFT + ((Math.min(far, Math.max(from, at)) - from) / (far - from)) * SPAN;
-  const ticks = Array.from({ length: 11 }, (_, index) => from + ((far - from) * index) / 10);
-  const zone = both ? x(-limit) : x(0);
+export function IndexPlate({
+  value,
+  limit,
+  both = false,
+  limitName,
+  error = null,
+  finding,
+}: IndexPlateProps) {
+  const far = Math.max(limit * (both ? 1.6 : 1.9), Math.abs(value) * 1.1, 0.001);
+  const x = scaleLinear([both ? -far : 0, far], [LEFT, WIDTH - LEFT])
+    .nice(5)
+    .clamp(true);
+  const [from = 0, to = far] = x.domain();
+  const band = (a: number, b: number, fill: string, height = 9) => (
+    <rect x={x(a)} y={AXIS - height} width={Math.max(0, x(b) - x(a))} height={height} fill={fill} />
+  );
+  const limits = both ? [-limit, limit] : [limit];
+  const named = x(limit);
   return (
-    <svg className="index-plate" viewBox={`0 0 ${WIDTH} 62`} role="img" aria-label={finding}>
-      <defs>
-        <pattern id="beyond" width="6" height="6" patternUnits="userSpaceOnUse">
-          <path d="M0 6L6 0" stroke="var(--rouge)" strokeWidth="1.2" opacity="0.75" />
-        </pattern>
-      </defs>
-      <rect x={x(from)} y="26" width={SPAN} height="10" fill="url(#beyond)" />
-      <rect x={zone} y="26" width={Math.max(0, x(limit) - zone)} height="10" fill="var(--zone)" />
-      <path d={`M${LEFT} 37H${LEFT + SPAN}`} stroke="var(--ink)" />
-      {ticks.map((tick) => (
-        <path key={tick} d={`M${x(tick)} 37v5`} stroke="var(--ink)" />
+    <svg className="index-plate" viewBox={`0 0 ${WIDTH} 64`} role="img" aria-label={finding}>
+      {band(from, to, ground('beyond'))}
+      {band(both ? -limit : from, limit, 'var(--leaf)')}
+      {band(both ? -limit : from, limit, 'var(--zone)')}
+      {error === null ? null : band(both ? -error : from, error, ground('error'))}
+      <path d={`M${x(from)} ${AXIS}H${x(to)}`} stroke="var(--ink)" strokeWidth="1.3" />
+      {x.ticks(25).map((tick) => (
+        <path key={tick} d={`M${x(tick)} ${AXIS}v5`} stroke="var(--ink)" strokeWidth="0.8" />
       ))}
-      {(both ? [-limit, limit] : [limit]).map((at) => (
-        <path key={at} d={`M${x(at)} 20v20`} stroke="var(--ink)" strokeWidth="2" />
+      {x.ticks(5).map((tick) => (
+        <g key={tick}>
+          <path d={`M${x(tick)} ${AXIS}v8`} stroke="var(--ink)" strokeWidth="1.1" />
+          <text x={x(tick)} y={AXIS + 21} textAnchor="middle">
+            {x.tickFormat(5)(tick)}
+          </text>
+        </g>
       ))}
-      <text x={x(limit)} y="14" textAnchor={x(limit) > WIDTH - 120 ? 'end' : 'middle'}>
+      {limits.map((at) => (
+        <path key={at} d={`M${x(at)} ${AXIS - 16}V${AXIS + 8}`} stroke="var(--ink)" strokeWidth="2.2" />
+      ))}
+      <text x={named + 4} y="14" textAnchor={named > WIDTH - 150 ? 'end' : 'start'}>
         {limitName}
       </text>
-      <text x={x(from)} y="56" textAnchor="start">
-        {from.toFixed(2)}
-      </text>
-      <text x={x(far)} y="56" textAnchor="end">
-        {far.toFixed(2)}
-      </text>
-      <path d={`M${x(value) - 5} 12h10v10l-5 8-5-8z`} fill="var(--ink)" />
+      <path
+        d={`M${x(value) - 5.5} ${AXIS - 21}h11v10l-5.5 10l-5.5-10z`}
+        fill="var(--ink)"
+        stroke="var(--leaf)"
+        strokeWidth="1"
+      />
     </svg>
   );
 }
 
-/** In tables: an ink bar with an upright at the limit; what passes it is hatched. */
+const SMALL = { width: 92, limit: 72 };
+
+/** In tables: an ink bar with an upright at the limit; what passes it is hatched. `share` is value ÷ limit. */
 export function SmallIndex({ share, finding }: { readonly share: number; readonly finding: string }) {
-  const at = Math.min(1.25, Math.max(0, share)) * 72;
+  const at = Math.min(SMALL.width / SMALL.limit, Math.max(0, share)) * SMALL.limit;
   return (
-    <svg className="small-index" width="92" height="14" viewBox="0 0 92 14" role="img" aria-label={finding}>
-      <path d="M0 12.5H90" stroke="var(--rule-strong)" />
-      <rect x="0" y="3" width={Math.min(at, 72)} height="8" fill="var(--ink)" />
-      {at > 72 ? (
-        <rect x="72" y="3" width={at - 72} height="8" fill="url(#beyond)" stroke="var(--rouge)" />
+    <svg
+      className="small-index"
+      width={SMALL.width}
+      height="16"
+      viewBox={`0 0 ${SMALL.width} 16`}
+      role="img"
+      aria-label={finding}
+    >
+      <path d={`M0 13.5H${SMALL.width}`} stroke="var(--ink-2)" />
+      <path d="M0.5 4v10" stroke="var(--ink-2)" />
+      <rect x="0" y="5" width={Math.min(at, SMALL.limit)} height="8" fill="var(--ink-2)" />
+      {at > SMALL.limit ? (
+        <rect
+          x={SMALL.limit}
+          y="5.5"
+          width={at - SMALL.limit - 0.5}
+          height="7.5"
+          fill={ground('beyond')}
+          stroke="var(--rouge)"
+        />
       ) : null}
-      <path d="M72 0v14" stroke="var(--ink)" strokeWidth="2" />
+      <path d={`M${SMALL.limit} 1v14`} stroke="var(--ink)" strokeWidth="2" />
     </svg>
   );
 }

@@ -1,20 +1,19 @@
 /**
  * A ruled table over TanStack Table: columns that sort are buttons, figures stand right, a total has a double rule
- * only where it was checked. On a phone each row becomes a small entry. The CSV is what is shown.
+ * only where it was checked. On a phone each row becomes a small entry. Long tables show a part and offer the rest.
+ * The links in it are one stop for the keyboard, then arrow keys go from row to row. The CSV is what is shown.
  */
 import type { ReactNode } from 'react';
-import {
-  rowSortingFeature,
-  tableFeatures,
-  useTable,
-  createSortedRowModel,
-  sortFns,
-} from '@tanstack/react-table';
+import { rowSortingFeature, tableFeatures, useTable, createSortedRowModel } from '@tanstack/react-table';
 import type { ColumnDef, SortingState } from '@tanstack/react-table';
-import { useMemo, useState } from 'react';
+import { useMemo, useRef, useState } from 'react';
 import { csvTable } from '../../../shared/dossier/csv.ts';
+import { compareFigures, compareWords } from '../../lib/compare.ts';
 import { saveFile } from '../../lib/save-file.ts';
 import { Button } from './button.tsx';
+import { Empty } from './empty.tsx';
+import { Icon } from './icon.tsx';
+import { useGridKeys } from './use-grid-keys.ts';
 
 export interface Column<Row> {
   readonly id: string;
@@ -34,30 +33,36 @@ interface RegisterTableProps<Row> {
   /** A cell for each column, under a single and over a double line. */
   readonly total?: readonly ReactNode[];
   readonly csv?: string;
+  /** What is so where there are no rows: "Nothing is out of the safe." */
   readonly empty: string;
+  /** What will show here, and one action, where there are no rows. */
+  readonly emptyWords?: string;
+  readonly emptyAction?: ReactNode;
 }
 
-const features = tableFeatures({ rowSortingFeature, sortedRowModel: createSortedRowModel(), sortFns });
+const features = tableFeatures({ rowSortingFeature, sortedRowModel: createSortedRowModel() });
+/** Rows shown at first, and added by each press of "Show more". */
+const PART = 200;
 
-export function RegisterTable<Row extends object>({
-  caption,
-  columns,
-  rows,
-  rowKey,
-  rowTone,
-  total,
-  csv,
-  empty,
-}: RegisterTableProps<Row>) {
+export function RegisterTable<Row extends object>(props: RegisterTableProps<Row>) {
+  const { caption, columns, rows, total, csv } = props;
   const [sorting, setSorting] = useState<SortingState>([]);
+  const [shown, setShown] = useState(PART);
+  const region = useRef<HTMLDivElement>(null);
+  const onKeyDown = useGridKeys(region);
   const definitions = useMemo(
     () =>
-      columns.map((column): ColumnDef<typeof features, Row> => ({
-        id: column.id,
-        accessorFn: (row) => column.value?.(row) ?? '',
-        enableSorting: column.value !== undefined,
-        sortFn: column.figure === undefined ? 'text' : 'alphanumeric',
-      })),
+      columns.map((column): ColumnDef<typeof features, Row> => {
+        const { id, value, figure } = column;
+        const compare = figure === undefined ? compareWords : compareFigures;
+        return {
+          id,
+          accessorFn: (row) => value?.(row) ?? '',
+          enableSorting: value !== undefined,
+          sortDescFirst: false,
+          sortFn: (a, b) => compare(value?.(a.original) ?? '', value?.(b.original) ?? ''),
+        };
+      }),
     [columns],
   );
   const data = useMemo(() => [...rows], [rows]);
@@ -68,69 +73,56 @@ export function RegisterTable<Row extends object>({
     state: { sorting },
     onSortingChange: setSorting,
   });
-  const sorted = new Map(
-    sorting.map(({ id, desc }) => [id, desc ? ('descending' as const) : ('ascending' as const)]),
-  );
-  if (rows.length === 0) return <p className="none">{empty}</p>;
+  if (rows.length === 0)
+    return <Empty what={props.empty} words={props.emptyWords} action={props.emptyAction} />;
+  const sorted = table.getRowModel().rows;
   return (
     <>
-      <div className="table-region" role="region" aria-label={caption} tabIndex={0}>
+      <div
+        className="table-region"
+        role="region"
+        aria-label={caption}
+        tabIndex={0}
+        ref={region}
+        onKeyDown={onKeyDown}
+      >
         <table className="register reflow">
           <caption className="sr-only">{caption}</caption>
           <thead>
             <tr>
               {columns.map((column) => (
-                <th
+                <Head
                   key={column.id}
-                  scope="col"
-                  className={column.figure === undefined ? '' : 'num'}
-                  aria-sort={sorted.get(column.id)}
-                >
-                  {column.value === undefined ? (
-                    column.head
-                  ) : (
-                    <button type="button" onClick={() => table.getColumn(column.id)?.toggleSorting()}>
-                      {column.head}
-                    </button>
-                  )}
-                </th>
+                  column={column}
+                  direction={sorting.find(({ id }) => id === column.id)}
+                  onSort={() => table.getColumn(column.id)?.toggleSorting()}
+                />
               ))}
             </tr>
           </thead>
           <tbody>
-            {table.getRowModel().rows.map(({ original }) => (
-              <tr key={rowKey(original)} className={rowTone?.(original)}>
-                {columns.map((column, index) => (
-                  <td
-                    key={column.id}
-                    data-label={column.head}
-                    className={`${index === 0 ? 'first' : ''} ${figureClass(column.figure)}`}
-                  >
-                    {column.cell(original)}
-                  </td>
-                ))}
+            {sorted.slice(0, shown).map(({ original }) => (
+              <tr key={props.rowKey(original)} className={props.rowTone?.(original)}>
+                <Cells columns={columns} content={(column) => column.cell(original)} />
               </tr>
             ))}
           </tbody>
           {total === undefined ? null : (
             <tfoot>
               <tr className="total">
-                {columns.map((column, index) => (
-                  <td
-                    key={column.id}
-                    data-label={column.head}
-                    className={`${index === 0 ? 'first' : ''} ${figureClass(column.figure)}`}
-                  >
-                    {total[index]}
-                  </td>
-                ))}
+                <Cells columns={columns} content={(_, index) => total[index]} />
               </tr>
             </tfoot>
           )}
         </table>
       </div>
-      {csv === undefined ? null : (
-        <p>
+      <div className="table-foot">
+        {rows.length > shown ? (
+          <Button icon="down" onPress={() => setShown(shown + PART)}>
+            {`Show more, ${shown} of ${rows.length} are here`}
+          </Button>
+        ) : null}
+        {csv === undefined ? null : (
           <Button
             kind="quiet"
             icon="save"
@@ -138,9 +130,51 @@ export function RegisterTable<Row extends object>({
           >
             Take as CSV
           </Button>
-        </p>
-      )}
+        )}
+      </div>
     </>
+  );
+}
+
+interface HeadProps<Row> {
+  readonly column: Column<Row>;
+  readonly direction: { readonly desc: boolean } | undefined;
+  readonly onSort: () => void;
+}
+
+function Head<Row>({ column, direction, onSort }: HeadProps<Row>) {
+  const order = direction === undefined ? undefined : direction.desc ? 'descending' : 'ascending';
+  return (
+    <th scope="col" className={column.figure === undefined ? '' : 'num'} aria-sort={order}>
+      {column.value === undefined ? (
+        column.head
+      ) : (
+        <button type="button" className={`sort ${order ?? ''}`} onClick={onSort}>
+          {column.head}
+          <Icon name="down" size={12} />
+        </button>
+      )}
+    </th>
+  );
+}
+
+interface CellsProps<Row> {
+  readonly columns: readonly Column<Row>[];
+  readonly content: (column: Column<Row>, index: number) => ReactNode;
+}
+
+/** The cells of a row: the first names it, the others carry their head for a phone. */
+function Cells<Row>({ columns, content }: CellsProps<Row>) {
+  return columns.map((column, index) =>
+    index === 0 ? (
+      <th key={column.id} scope="row" className={`first ${figureClass(column.figure)}`}>
+        {content(column, index)}
+      </th>
+    ) : (
+      <td key={column.id} data-label={column.head} className={figureClass(column.figure)}>
+        {content(column, index)}
+      </td>
+    ),
   );
 }
 
