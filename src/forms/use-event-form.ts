@@ -93,6 +93,8 @@ export function useEventForm<Values extends object>(options: EventFormOptions<Va
       return;
     }
     setFlags({ busy: true, offline: false, tried: true });
+    // Kept before it is sent: a reload while the answer is on its way must find the same key.
+    keepDraft(name, { key: state.key, values: plain(state.values) });
     try {
       const posted = eventAnswer.parse(
         await send('POST', `/events/${options.event}`, { body: preview.body, key: state.key }),
@@ -108,7 +110,9 @@ export function useEventForm<Values extends object>(options: EventFormOptions<Va
       if (error instanceof ApiProblem && error.isRefusal) {
         // The server has refused: what is sent next is another request. After a fault of its own, whether it was
         // recorded can't be known, so the same key goes again.
-        setState((before) => ({ ...before, key: newKey() }));
+        const key = newKey();
+        setState({ ...state, key });
+        keepDraft(name, { key, values: plain(state.values) });
         await client.invalidateQueries({ queryKey: keys.book });
       }
     }
@@ -128,6 +132,8 @@ export function useEventForm<Values extends object>(options: EventFormOptions<Va
     answer,
   };
 }
+
+const plain = (values: object): Record<string, unknown> => Object.fromEntries(Object.entries(values));
 
 function begin<Values extends object>(name: string, initial: Values): { key: string; values: Values } {
   const kept = readDraft(name);

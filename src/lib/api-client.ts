@@ -71,7 +71,8 @@ function readProblem(text: string, status: number): z.output<typeof problem> {
   try {
     return problem.parse(JSON.parse(text));
   } catch {
-    const detail = 'The server did not answer as it should. What you typed is kept; send it again, it is recorded once.';
+    const detail =
+      'The server did not answer as it should. What you typed is kept; send it again, it is recorded once.';
     return { type: '/problems/unavailable', title: '', status, detail, errors: [] };
   }
 }
