@@ -5,6 +5,7 @@ import { lotAndVoucherRoutes } from './lots-and-vouchers.ts';
 import { metalRequestRoutes } from './metal-requests.ts';
 import { peopleRoutes } from './people.ts';
 import { registerRoutes } from './registers.ts';
+import { reportRoutes } from './reports.ts';
 import type { Route } from './route.ts';
 import { sessionRoutes } from './session.ts';
 import { signatureRoutes } from './signatures.ts';
@@ -20,4 +21,5 @@ export const routes: readonly Route[] = [
   ...registerRoutes,
   ...lotAndVoucherRoutes,
   ...todayRoutes,
+  ...reportRoutes,
 ];

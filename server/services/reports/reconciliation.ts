@@ -1,0 +1,85 @@
+/** Reads the sums that a period's reconciliation is made of; the reckoning itself is `shared/loss/reconciliation.ts`. */
+import { VOUCHER_KINDS } from '../../../shared/book/kinds.ts';
+import { ACCOUNT_KINDS } from '../../../shared/book/account.ts';
+import { RECONCILIATION_WORDS, reconcile } from '../../../shared/loss/reconciliation.ts';
+import { massToJson } from '../../../shared/mass/vector.ts';
+import { massFields, massOf } from '../../../shared/schemas/book.ts';
+import type { ReconciliationJson, ReconciliationQuery } from '../../../shared/schemas/reports.ts';
+import { reconciliationJson } from '../../../shared/schemas/reports.ts';
+import { z } from '../../../shared/schemas/zod.ts';
+import type { Tx } from '../../db/rows.ts';
+
+const METALS = ['gold', 'silver', 'platinum', 'palladium'] as const;
+const MASSES = ['gross', ...METALS] as const;
+const grams = (alias: string) =>
+  MASSES.map((m) => `grams(coalesce(sum(${alias}.${m}_ug), 0)::bigint) AS ${m}_g`).join(', ');
+
+const sumRow = z.object({
+  account_kind: z.enum(ACCOUNT_KINDS),
+  voucher_kind: z.enum(VOUCHER_KINDS),
+  side: z.enum(['onto', 'from']),
+  because: z.enum(['ordinary', 'change_of_owner', 'closed_period']),
+  ...massFields,
+});
+
+/** The reconciliation of a period for one owner (the house, a party) or all. */
+export async function readReconciliation(tx: Tx, query: ReconciliationQuery): Promise<ReconciliationJson> {
+  const bind = [query.from, query.to, query.owner];
+  const opening = massOf(await tx.one(z.object(massFields), placesUpTo('e.business_date < $1::date'), bind));
+  const closing = massOf(await tx.one(z.object(massFields), placesUpTo('e.business_date <= $2::date'), bind));
+  const sums = (await tx.rows(sumRow, SUMS, bind)).map((row) => ({ ...row, mass: massOf(row) }));
+  const reckoned = reconcile(opening, closing, sums);
+  return {
+    ...query,
+    opening: massToJson(reckoned.opening),
+    lines: reckoned.lines.map(({ line, mass }) => ({
+      line,
+      name: RECONCILIATION_WORDS[line],
+      account_kind: ACCOUNT_KINDS.find((kind) => kind === line) ?? null,
+      ...massToJson(mass),
+    })),
+    closing: massToJson(reckoned.closing),
+    left_over: massToJson(reckoned.left_over),
+    places: await tx.rows(reconciliationJson.shape.places.element, PLACES, bind),
+  };
+}
+
+const OWNED = `($3::text = 'all' OR ($3::text = 'house' AND l.owner_id IS NULL) OR l.owner_id::text = $3::text)`;
+const FROM = `FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id
+  JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id
+  WHERE e.workshop_id = current_workshop() AND ${OWNED}`;
+
+/** The bound dates are named in every statement, so that one list of values serves them all. */
+const placesUpTo = (when: string) =>
+  `SELECT ${grams('e')} ${FROM} AND is_place(a.kind) AND ${when} AND $1::date IS NOT NULL AND $2::date IS NOT NULL`;
+
+/** A voucher that mends one of a period that was closed when it was recorded is told apart; so is a change of owner. */
+const SUMS = `SELECT a.kind AS account_kind, coalesce(first.kind, r.kind) AS voucher_kind, CASE WHEN e.gross_ug < 0 THEN 'from' ELSE 'onto' END AS side,
+    CASE WHEN coalesce(first.kind, r.kind) = 'ownership' THEN 'change_of_owner'
+      WHEN first.business_date < $1::date AND EXISTS (SELECT 1 FROM period p WHERE p.workshop_id = r.workshop_id AND p.closed
+        AND first.business_date BETWEEN p.first_day AND p.last_day) THEN 'closed_period'
+      ELSE 'ordinary' END AS because, ${grams('e')}
+  ${FROM.replace(
+    'WHERE',
+    `JOIN record r ON r.workshop_id = e.workshop_id AND r.sequence = e.voucher_sequence
+  LEFT JOIN record first ON first.workshop_id = r.workshop_id AND first.id = coalesce(r.reverses, nullif(r.detail->>'corrects', '')::uuid)
+  WHERE`,
+  )} AND e.business_date BETWEEN $1::date AND $2::date GROUP BY 1, 2, 3, 4`;
+
+const PLACES = `SELECT a.id::text AS account_id, a.name, a.kind, m.metal,
+    grams(coalesce(sum(m.ug) FILTER (WHERE e.business_date < $1::date), 0)::bigint) AS opening_g,
+    grams(coalesce(sum(m.ug) FILTER (WHERE e.business_date BETWEEN $1::date AND $2::date AND m.ug > 0), 0)::bigint) AS in_g,
+    grams(coalesce(-sum(m.ug) FILTER (WHERE e.business_date BETWEEN $1::date AND $2::date AND m.ug < 0), 0)::bigint) AS out_g,
+    (SELECT grams(coalesce(sum(CASE m.metal WHEN 'gold' THEN x.gold_ug WHEN 'silver' THEN x.silver_ug WHEN 'platinum' THEN x.platinum_ug ELSE x.palladium_ug END), 0)::bigint)
+      FROM record r JOIN entry x ON x.workshop_id = r.workshop_id AND x.voucher_sequence = r.sequence
+      JOIN account y ON y.workshop_id = x.workshop_id AND y.id = x.account_id AND y.kind = 'working_loss'
+      JOIN lot z ON z.workshop_id = x.workshop_id AND z.id = x.lot_id
+      WHERE r.workshop_id = current_workshop() AND r.bench = a.id AND r.business_date BETWEEN $1::date AND $2::date
+        AND ${OWNED.replaceAll('l.', 'z.')}) AS loss_g,
+    grams(coalesce(sum(m.ug), 0)::bigint) AS closing_g
+  ${FROM.replace('WHERE', `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', e.${m}_ug)`).join(', ')}) AS m(metal, ug) WHERE`)}
+    AND is_place(a.kind) AND e.business_date <= $2::date
+  GROUP BY a.id, a.name, a.kind, m.metal
+  HAVING sum(m.ug) <> 0 OR coalesce(sum(abs(m.ug)) FILTER (WHERE e.business_date >= $1::date), 0) <> 0
+  ORDER BY array_position(ARRAY['gold', 'silver', 'platinum', 'palladium'], m.metal),
+    array_position(ARRAY['safe', 'bench', 'station', 'bin', 'outworker', 'approval', 'courier', 'refiner'], a.kind), a.name`;
