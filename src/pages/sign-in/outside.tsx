@@ -1,0 +1,31 @@
+/** The sheet of the pages outside: the plate with the rosette at the left, one form at the right. */
+import type { ReactNode } from 'react';
+import { useEffect } from 'react';
+import wordmark from '../../assets/wordmark-inline.svg?raw';
+import { IconSprite } from '../../components/ui/icon.tsx';
+import { Rosette } from '../../components/ui/rosette.tsx';
+
+const ORNAMENT = '9c41e7305bd82af6';
+
+export function Outside({ title, lede, children }: { readonly title: string; readonly lede: string; readonly children: ReactNode }) {
+  useEffect(() => {
+    document.title = `${title} · Grainward`;
+  }, [title]);
+  return (
+    <div className="outside">
+      <IconSprite />
+      <aside className="outside-plate">
+        <span className="wordmark" dangerouslySetInnerHTML={{ __html: wordmark }} />
+        <div className="ornament">
+          <Rosette hash={ORNAMENT} size={420} />
+        </div>
+        <p>The book of your metal, to the milligram: where it lies, who holds it, what was lost at which operation.</p>
+      </aside>
+      <main className="outside-form">
+        <h1>{title}</h1>
+        <p className="text-ink-2">{lede}</p>
+        {children}
+      </main>
+    </div>
+  );
+}

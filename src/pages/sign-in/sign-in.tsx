@@ -1,0 +1,54 @@
+/** Signing in with e-mail address and password. */
+import { useState } from 'react';
+import { Link, useNavigate, useSearchParams } from 'react-router-dom';
+import { useQueryClient } from '@tanstack/react-query';
+import { Button } from '../../components/ui/button.tsx';
+import { Notice } from '../../components/ui/notice.tsx';
+import { TextField } from '../../components/ui/text-field.tsx';
+import { send } from '../../lib/api-client.ts';
+import { Outside } from './outside.tsx';
+import { useOutsideForm } from './use-outside-form.ts';
+
+export function SignIn() {
+  const [email, setEmail] = useState('');
+  const [password, setPassword] = useState('');
+  const [query] = useSearchParams();
+  const navigate = useNavigate();
+  const client = useQueryClient();
+  const form = useOutsideForm(async () => {
+    await send('POST', '/session', { body: { email, password } });
+    client.clear();
+    const to = query.get('to') ?? '/';
+    await navigate(to.startsWith('/') && !to.startsWith('//') ? to : '/');
+  });
+  return (
+    <Outside title="Sign in" lede="With the e-mail address that the workshop knows.">
+      <form
+        noValidate
+        onSubmit={(event) => {
+          event.preventDefault();
+          void form.submit();
+        }}
+      >
+        {query.get('ended') === null ? null : (
+          <Notice severity="near" what="Your access to that workshop has ended.">
+            Ask its proprietor to renew it.
+          </Notice>
+        )}
+        {form.problem === null ? null : (
+          <Notice severity="fault" what={form.problem.split('. ')[0] + '.'}>
+            {form.problem.split('. ').slice(1).join('. ')}
+          </Notice>
+        )}
+        <TextField label="E-mail address" type="email" autoComplete="username" value={email} onChange={setEmail} error={form.errorOf('email')} />
+        <TextField label="Password" type="password" autoComplete="current-password" value={password} onChange={setPassword} error={form.errorOf('password')} />
+        <Button kind="primary" counter submit busy={form.busy ? 'Signing in …' : false}>
+          Sign in
+        </Button>
+        <p>
+          <Link to="/forgotten">Set a new password</Link> · <Link to="/sign-up">Open a book for a workshop</Link>
+        </p>
+      </form>
+    </Outside>
+  );
+}
