@@ -43,7 +43,7 @@ export function LotChip({ id, code, form, description, standing, owner }: LotChi
   const held = standing === 'on_hold';
   return (
     <span className="chip-wrap">
-      <Link className="chip" to={`/lots/${id}`}>
+      <Link className={`chip ${standing ?? ''}`} to={`/lots/${id}`}>
         <Icon name={held ? 'hold' : formIcon(form)} size={16} />
         <span>
           <b>{code.slice(0, at)}</b>

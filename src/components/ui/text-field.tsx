@@ -1,6 +1,7 @@
 /** One line of text, a password, a date, or several lines. */
+import { useState } from 'react';
 import { Field } from './field.tsx';
-import type { FieldProps } from './field.tsx';
+import type { ControlAttributes, FieldProps } from './field.tsx';
 
 interface TextFieldProps extends FieldProps {
   readonly value: string;
@@ -12,36 +13,47 @@ interface TextFieldProps extends FieldProps {
   readonly required?: boolean;
 }
 
-export function TextField({
-  value,
-  onChange,
-  type = 'text',
-  lines,
-  autoComplete,
-  inputMode,
-  ...field
-}: TextFieldProps) {
+export function TextField(props: TextFieldProps) {
+  const { label, hint, error, value, onChange, lines } = props;
   return (
-    <Field {...field}>
+    <Field label={label} hint={hint} error={error}>
       {(attributes) =>
         lines === undefined ? (
-          <input
-            {...attributes}
-            type={type}
-            value={value}
-            autoComplete={autoComplete ?? 'off'}
-            inputMode={inputMode}
-            onChange={(event) => onChange(event.target.value)}
-          />
+          <Line {...props} attributes={attributes} />
         ) : (
           <textarea
             {...attributes}
             rows={lines}
             value={value}
+            required={props.required}
             onChange={(event) => onChange(event.target.value)}
           />
         )
       }
     </Field>
+  );
+}
+
+/** A single line; a password can be shown, pasted and filled in by a password manager. */
+function Line(props: TextFieldProps & { readonly attributes: ControlAttributes }) {
+  const { attributes, value, onChange, type = 'text', autoComplete = 'off', inputMode, required } = props;
+  const [shown, setShown] = useState(false);
+  return (
+    <>
+      <input
+        {...attributes}
+        type={shown ? 'text' : type}
+        value={value}
+        autoComplete={autoComplete}
+        inputMode={inputMode}
+        required={required}
+        onChange={(event) => onChange(event.target.value)}
+      />
+      {type === 'password' ? (
+        <button type="button" className="show" aria-pressed={shown} onClick={() => setShown(!shown)}>
+          {shown ? 'Hide' : 'Show'}
+        </button>
+      ) : null}
+    </>
   );
 }

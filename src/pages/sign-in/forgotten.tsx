@@ -30,7 +30,14 @@ export function Forgotten() {
           </Notice>
         ) : null}
         {form.problem === null ? null : <Notice severity="fault" what={form.problem} />}
-        <TextField label="E-mail address" type="email" autoComplete="username" value={email} onChange={setEmail} error={form.errorOf('email')} />
+        <TextField
+          label="E-mail address"
+          type="email"
+          autoComplete="username"
+          value={email}
+          onChange={setEmail}
+          error={form.errorOf('email')}
+        />
         <Button kind="primary" counter submit busy={form.busy ? 'Sending …' : false}>
           Send the link
         </Button>

@@ -23,7 +23,9 @@ export function Invitation() {
   useEffect(() => {
     send('POST', '/invitations/read', { body: { token } })
       .then((answer) => setInfo(invitationInfo.parse(answer)))
-      .catch((error: unknown) => setRefused(error instanceof Error ? error.message : 'This link can’t be read.'));
+      .catch((error: unknown) =>
+        setRefused(error instanceof Error ? error.message : 'This link can’t be read.'),
+      );
   }, [token]);
   const form = useOutsideForm(async () => {
     await send('POST', '/invitations/accept', { body: { token, password } });
@@ -38,7 +40,14 @@ export function Invitation() {
     );
   }
   return (
-    <Outside title="Invitation" lede={info === null ? 'Reading the invitation …' : `${info.workshop_name} invites ${info.name} as ${info.role}.`}>
+    <Outside
+      title="Invitation"
+      lede={
+        info === null
+          ? 'Reading the invitation …'
+          : `${info.workshop_name} invites ${info.name} as ${info.role}.`
+      }
+    >
       {info === null ? null : (
         <form
           noValidate
@@ -51,7 +60,11 @@ export function Invitation() {
           <input type="text" hidden readOnly autoComplete="username" value={info.email} />
           <TextField
             label={info.has_account ? `Password of ${info.email}` : 'Choose a password'}
-            hint={info.has_account ? 'That address has an account already.' : 'At least 15 characters. Several words in a row are easy to remember.'}
+            hint={
+              info.has_account
+                ? 'That address has an account already.'
+                : 'At least 15 characters. Several words in a row are easy to remember.'
+            }
             type="password"
             autoComplete={info.has_account ? 'current-password' : 'new-password'}
             value={password}

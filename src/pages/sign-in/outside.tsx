@@ -7,7 +7,15 @@ import { Rosette } from '../../components/ui/rosette.tsx';
 
 const ORNAMENT = '9c41e7305bd82af6';
 
-export function Outside({ title, lede, children }: { readonly title: string; readonly lede: string; readonly children: ReactNode }) {
+export function Outside({
+  title,
+  lede,
+  children,
+}: {
+  readonly title: string;
+  readonly lede: string;
+  readonly children: ReactNode;
+}) {
   useEffect(() => {
     document.title = `${title} · Grainward`;
   }, [title]);
@@ -15,15 +23,18 @@ export function Outside({ title, lede, children }: { readonly title: string; rea
     <div className="outside">
       <IconSprite />
       <aside className="outside-plate">
-        <span className="wordmark" dangerouslySetInnerHTML={{ __html: wordmark }} />
         <div className="ornament">
-          <Rosette hash={ORNAMENT} size={420} />
+          <Rosette hash={ORNAMENT} />
         </div>
-        <p>The book of your metal, to the milligram: where it lies, who holds it, what was lost at which operation.</p>
+        <span className="wordmark" dangerouslySetInnerHTML={{ __html: wordmark }} />
+        <p>
+          The book of your metal, to the milligram: where it lies, who holds it, what was lost at which
+          operation.
+        </p>
       </aside>
       <main className="outside-form">
         <h1>{title}</h1>
-        <p className="text-ink-2">{lede}</p>
+        <p className="lede">{lede}</p>
         {children}
       </main>
     </div>

@@ -31,7 +31,15 @@ export function Reset() {
           }}
         >
           {form.problem === null ? null : <Notice severity="fault" what={form.problem} />}
-          <TextField label="New password" hint="At least 15 characters. Several words in a row are easy to remember." type="password" autoComplete="new-password" value={password} onChange={setPassword} error={form.errorOf('password')} />
+          <TextField
+            label="New password"
+            hint="At least 15 characters. Several words in a row are easy to remember."
+            type="password"
+            autoComplete="new-password"
+            value={password}
+            onChange={setPassword}
+            error={form.errorOf('password')}
+          />
           <Button kind="primary" counter submit busy={form.busy ? 'Setting …' : false}>
             Set the password
           </Button>

@@ -22,7 +22,7 @@ export function SignIn() {
     await navigate(to.startsWith('/') && !to.startsWith('//') ? to : '/');
   });
   return (
-    <Outside title="Sign in" lede="With the e-mail address that the workshop knows.">
+    <Outside title="Sign in" lede="to the book of your workshop">
       <form
         noValidate
         onSubmit={(event) => {
@@ -35,20 +35,43 @@ export function SignIn() {
             Ask its proprietor to renew it.
           </Notice>
         )}
-        {form.problem === null ? null : (
-          <Notice severity="fault" what={form.problem.split('. ')[0] + '.'}>
-            {form.problem.split('. ').slice(1).join('. ')}
-          </Notice>
-        )}
-        <TextField label="E-mail address" type="email" autoComplete="username" value={email} onChange={setEmail} error={form.errorOf('email')} />
-        <TextField label="Password" type="password" autoComplete="current-password" value={password} onChange={setPassword} error={form.errorOf('password')} />
+        {form.problem === null ? null : <Refused sentence={form.problem} />}
+        <TextField
+          label="E-mail address"
+          type="email"
+          autoComplete="username"
+          value={email}
+          onChange={setEmail}
+          error={form.errorOf('email')}
+        />
+        <TextField
+          label="Password"
+          type="password"
+          autoComplete="current-password"
+          value={password}
+          onChange={setPassword}
+          error={form.errorOf('password')}
+        />
         <Button kind="primary" counter submit busy={form.busy ? 'Signing in …' : false}>
           Sign in
         </Button>
         <p>
-          <Link to="/forgotten">Set a new password</Link> · <Link to="/sign-up">Open a book for a workshop</Link>
+          <Link to="/forgotten">Set a new password</Link> ·{' '}
+          <Link to="/sign-up">Open a book for a workshop</Link>
         </p>
       </form>
     </Outside>
+  );
+}
+
+/** The first sentence says what is so and stands bold. */
+function Refused({ sentence }: { readonly sentence: string }) {
+  const end = sentence.indexOf('. ') + 1;
+  return end === 0 ? (
+    <Notice severity="fault" what={sentence} />
+  ) : (
+    <Notice severity="fault" what={sentence.slice(0, end)}>
+      {sentence.slice(end)}
+    </Notice>
   );
 }

@@ -22,7 +22,8 @@ export function SignUp() {
     email: '',
     password: '',
   });
-  const set = (name: keyof typeof values) => (value: string) => setValues((before) => ({ ...before, [name]: value }));
+  const set = (name: keyof typeof values) => (value: string) =>
+    setValues((before) => ({ ...before, [name]: value }));
   const navigate = useNavigate();
   const client = useQueryClient();
   const form = useOutsideForm(async () => {
@@ -40,14 +41,53 @@ export function SignUp() {
         }}
       >
         {form.problem === null ? null : <Notice severity="fault" what={form.problem} />}
-        <TextField label="Name of the workshop" value={values.workshop_name} onChange={set('workshop_name')} error={form.errorOf('workshop_name')} />
+        <TextField
+          label="Name of the workshop"
+          value={values.workshop_name}
+          onChange={set('workshop_name')}
+          error={form.errorOf('workshop_name')}
+        />
         <div className="fields">
-          <SelectField label="Time zone" hint="Its midnight ends the business day." value={values.time_zone} onChange={set('time_zone')} options={ZONES.map((zone) => ({ value: zone, label: zone.replaceAll('_', ' ') }))} error={form.errorOf('time_zone')} />
-          <SelectField label="Currency" hint="For prices and values." value={values.currency} onChange={set('currency')} options={CURRENCIES.map((code) => ({ value: code, label: code }))} />
+          <SelectField
+            label="Time zone"
+            hint="Its midnight ends the business day."
+            value={values.time_zone}
+            onChange={set('time_zone')}
+            options={ZONES.map((zone) => ({ value: zone, label: zone.replaceAll('_', ' ') }))}
+            error={form.errorOf('time_zone')}
+          />
+          <SelectField
+            label="Currency"
+            hint="For prices and values."
+            value={values.currency}
+            onChange={set('currency')}
+            options={CURRENCIES.map((code) => ({ value: code, label: code }))}
+          />
         </div>
-        <TextField label="Your name" value={values.name} onChange={set('name')} autoComplete="name" error={form.errorOf('name')} />
-        <TextField label="E-mail address" type="email" value={values.email} onChange={set('email')} autoComplete="username" error={form.errorOf('email')} />
-        <TextField label="Password" type="password" hint="At least 15 characters. Several words in a row are easy to remember." value={values.password} onChange={set('password')} autoComplete="new-password" error={form.errorOf('password')} />
+        <TextField
+          label="Your name"
+          value={values.name}
+          onChange={set('name')}
+          autoComplete="name"
+          error={form.errorOf('name')}
+        />
+        <TextField
+          label="E-mail address"
+          type="email"
+          value={values.email}
+          onChange={set('email')}
+          autoComplete="username"
+          error={form.errorOf('email')}
+        />
+        <TextField
+          label="Password"
+          type="password"
+          hint="At least 15 characters. Several words in a row are easy to remember."
+          value={values.password}
+          onChange={set('password')}
+          autoComplete="new-password"
+          error={form.errorOf('password')}
+        />
         <Button kind="primary" counter submit busy={form.busy ? 'Opening the book …' : false}>
           Open the book
         </Button>

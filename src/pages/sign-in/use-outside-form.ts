@@ -3,7 +3,10 @@ import { useState } from 'react';
 import { ApiProblem } from '../../lib/api-client.ts';
 
 export function useOutsideForm(action: () => Promise<void>) {
-  const [state, setState] = useState<{ busy: boolean; problem: { sentence: string; fields: ReadonlyMap<string, string> } | null }>({
+  const [state, setState] = useState<{
+    busy: boolean;
+    problem: { sentence: string; fields: ReadonlyMap<string, string> } | null;
+  }>({
     busy: false,
     problem: null,
   });
@@ -26,7 +29,13 @@ export function useOutsideForm(action: () => Promise<void>) {
 
 function problemOf(error: unknown) {
   if (error instanceof ApiProblem) {
-    return { sentence: error.message, fields: new Map(error.errors.map(({ field, sentence }) => [field ?? '', sentence])) };
+    return {
+      sentence: error.message,
+      fields: new Map(error.errors.map(({ field, sentence }) => [field ?? '', sentence])),
+    };
   }
-  return { sentence: error instanceof Error ? error.message : 'Something failed. Try again.', fields: new Map<string, string>() };
+  return {
+    sentence: error instanceof Error ? error.message : 'Something failed. Try again.',
+    fields: new Map<string, string>(),
+  };
 }
