@@ -27,9 +27,9 @@ export function Outside({
           <Rosette hash={ORNAMENT} />
         </div>
         <span className="wordmark" dangerouslySetInnerHTML={{ __html: wordmark }} />
-        <p>
-          The book of your metal, to the milligram: where it lies, who holds it, what was lost at which
-          operation.
+        <p className="outside-words">
+          Every gram has a place, a holder and a voucher.
+          <small>The fine-metal book of goldsmiths’ workshops</small>
         </p>
       </aside>
       <main className="outside-form">

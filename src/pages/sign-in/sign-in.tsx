@@ -55,9 +55,13 @@ export function SignIn() {
         <Button kind="primary" counter submit busy={form.busy ? 'Signing in …' : false}>
           Sign in
         </Button>
-        <p>
-          <Link to="/forgotten">Set a new password</Link> ·{' '}
+        <p className="outside-links">
+          <Link to="/forgotten">Forgotten password</Link>
           <Link to="/sign-up">Open a book for a workshop</Link>
+        </p>
+        <p className="outside-note">
+          Invited as an auditor? Use the link in your letter; it opens one workshop, read-only, until its
+          date.
         </p>
       </form>
     </Outside>
