@@ -10,7 +10,7 @@ interface Ring {
   readonly curves: number;
 }
 
-const STEPS = 180;
+const STEPS = 360;
 
 export function rosettePaths(hash: string, radius: number): readonly string[] {
   const b = Array.from(

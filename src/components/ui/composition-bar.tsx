@@ -1,6 +1,6 @@
 /**
  * Metals side by side by fineness, with their patterns; names and figures under their parts. Parts too thin for their
- * names are named in a line beneath instead.
+ * names, and on a phone all of them, are named in a line beneath instead.
  */
 import { gramsText } from '../../../shared/mass/grams-text.ts';
 import { METALS } from '../../../shared/mass/vector.ts';
@@ -29,7 +29,6 @@ export function CompositionBar({ masses }: { readonly masses: Masses }) {
   const gross = gramsText(masses.gross_g);
   if (gross <= 0n) return null;
   const parts = partsOf(masses, gross);
-  const thin = parts.filter((part) => part.tenths < THIN);
   const words = parts.map(({ metal, tenths }) => `${metalName(metal)} ${perThousand(tenths)}`).join(', ');
   return (
     <div className="composition" role="group" aria-label={`Per thousand: ${words}`}>
@@ -41,15 +40,13 @@ export function CompositionBar({ masses }: { readonly masses: Masses }) {
           </div>
         ))}
       </div>
-      {thin.length === 0 ? null : (
-        <div className="composition-names">
-          {thin.map((part) => (
-            <span key={part.metal}>
-              <Swatch metal={part.metal} /> <Named part={part} />
-            </span>
-          ))}
-        </div>
-      )}
+      <div className="composition-names">
+        {parts.map((part) => (
+          <span key={part.metal} className={part.tenths < THIN ? '' : 'wide'}>
+            <Swatch metal={part.metal} /> <Named part={part} />
+          </span>
+        ))}
+      </div>
     </div>
   );
 }

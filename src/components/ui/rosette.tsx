@@ -26,7 +26,14 @@ export function Rosette({ hash, size = 200, name, className = 'rosette' }: Roset
       aria-hidden={name === undefined ? true : undefined}
     >
       {paths.map((path) => (
-        <path key={path} d={path} fill="none" stroke="currentColor" strokeWidth="0.35" />
+        <path
+          key={path}
+          d={path}
+          fill="none"
+          stroke="currentColor"
+          strokeWidth="0.6"
+          vectorEffect="non-scaling-stroke"
+        />
       ))}
     </svg>
   );
