@@ -36,8 +36,8 @@ server.listen(config.port, '127.0.0.1', () => {
   process.send?.({ listening: address });
 });
 
-process.on('SIGTERM', end);
-process.on('SIGINT', end);
+process.on('SIGTERM', () => void end());
+process.on('SIGINT', () => void end());
 process.on('uncaughtException', (error) => {
   context.log.fatal({ err: error }, 'the process can’t go on safely');
   process.exit(1);

@@ -164,7 +164,7 @@ function awayAccount(lot: Lot, field: string, at: At): Outcome<Account> {
   const { input, party, facts } = at;
   const mayGo = lot.owner_id === null || lot.owner_id === party.id;
   if (!mayGo) {
-    const owner = facts.parties.get(lot.owner_id ?? '')?.name ?? 'somebody else';
+    const owner = facts.parties.get(lot.owner_id)?.name ?? 'somebody else';
     const sentence = `Lot ${lot.code} belongs to ${owner}, not to ${party.name}. Choose its owner, or change the owner first.`;
     return refuse({ code: 'wrong_owner', field: `${field}.lot_id`, sentence });
   }

@@ -28,7 +28,7 @@ export const newLotFields = {
   palladium_permille: finenessField,
   pieces: pieces.nullable().default(null),
 };
-const newLotSchema = z.strictObject(newLotFields);
+export const newLotSchema = z.strictObject(newLotFields);
 export type NewLotInput = z.output<typeof newLotSchema>;
 
 /**

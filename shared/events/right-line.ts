@@ -27,7 +27,7 @@ export const rightLineFields = {
     .nullable()
     .default(null),
 };
-const rightLineSchema = z.strictObject(rightLineFields);
+export const rightLineSchema = z.strictObject(rightLineFields);
 export type RightLine = z.output<typeof rightLineSchema>;
 
 /**

@@ -5,7 +5,7 @@
 import type { Account } from '../book/account.ts';
 import { isPlace } from '../book/account.ts';
 import type { Outcome } from '../book/draft.ts';
-import { accept, refuse } from '../book/draft.ts';
+import { refuse } from '../book/draft.ts';
 import type { Facts } from '../book/facts.ts';
 import type { Basis, Lot, LotForm, Origin } from '../book/lot.ts';
 import { isZeroMass } from '../mass/vector.ts';

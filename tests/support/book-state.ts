@@ -304,7 +304,6 @@ function oneOf<T extends string>(list: readonly T[], value: string): T {
 /** Leaves are text or null, lists are flat, masses carry six decimals. */
 function checkDetail(detail: Detail): void {
   for (const [key, value] of Object.entries(detail)) {
-    if (value === undefined) throw new Error(`detail.${key} is undefined.`);
     if (key.endsWith('_g') && typeof value === 'string' && !/^-?\d+\.\d{6}$/.test(value)) {
       throw new Error(`detail.${key} is "${value}", which is not grams with six decimals.`);
     }

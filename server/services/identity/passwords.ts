@@ -29,7 +29,7 @@ export function checkPassword(password: string, about: readonly string[], second
     throw new ProblemError('invalid', sentence, { errors: [{ field: 'password', sentence }] });
   };
   const least = second_factor ? LEAST_WITH_SECOND_FACTOR : LEAST;
-  if ([...password].length < least) {
+  if (Array.from(password).length < least) {
     refuse(`A password has at least ${least} characters. Several words in a row are easy to remember.`);
   }
   if (bcrypt.truncates(password)) {

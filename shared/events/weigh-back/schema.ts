@@ -91,7 +91,7 @@ const fields = z.strictObject({
 
 export const weighBackSchema = fields.refine((input) => input.works.length + input.overnight.length > 0, {
   path: ['works'],
-  message: 'Nothing is weighed yet. Choose the job that comes back, or name what stays for the night.',
+  error: 'Nothing is weighed yet. Choose the job that comes back, or name what stays for the night.',
 });
 
 export type WeighBackInput = z.output<typeof weighBackSchema>;

@@ -6,7 +6,7 @@ import { describe, expect, it } from 'vitest';
 const FACES = ['archivo-400', 'archivo-600', 'archivo-700', 'besley-500', 'besley-600'];
 const LATIN_1 = [range(0x20, 0x7e), range(0xa0, 0xff)].flat();
 /** Thin space, minus, dashes, quotation marks, ellipsis, euro; and letters of neighbours’ names. */
-const SIGNS = [...'\u2009\u2212–‘’“”…€ŁłŽžŐőŞş'].map((character) => character.codePointAt(0) ?? 0);
+const SIGNS = Array.from('\u2009\u2212–‘’“”…€ŁłŽžŐőŞş', (character) => character.codePointAt(0) ?? 0);
 
 function range(from: number, to: number): readonly number[] {
   return Array.from({ length: to - from + 1 }, (_, index) => from + index);
