@@ -11,6 +11,7 @@ import { benchRoutes } from '../pages/my-bench/routes.ts';
 import { refiningRoutes } from '../pages/refining/routes.ts';
 import { reportRoutes } from '../pages/reports/routes.ts';
 import { signInRoutes } from '../pages/sign-in/routes.ts';
+import { signatureRoutes } from '../pages/signatures/routes.ts';
 import { todayRoutes } from '../pages/today/routes.ts';
 import { workshopRoutes } from '../pages/workshop/routes.ts';
 import { ErrorPage } from './error-page.tsx';
@@ -25,6 +26,7 @@ export function makeRouter(client: QueryClient) {
     ...refiningRoutes,
     ...reportRoutes,
     ...insuranceRoutes,
+    ...signatureRoutes,
     ...workshopRoutes,
     ...benchRoutes,
   ];
