@@ -1,0 +1,60 @@
+/** An invented keeper's session and facts, as the server answers them. */
+export const SESSION = {
+  user: { id: 'u1', email: 'maud@ferrow-lisle.example', name: 'Maud Ilsley' },
+  person: { id: 'p1', name: 'Maud Ilsley', role: 'keeper', has_pin: true },
+  workshop: {
+    id: 'w1',
+    name: 'Ferrow & Lisle',
+    currency: 'EUR',
+    time_zone: 'Europe/Dublin',
+    mass_unit: 'g',
+  },
+  workshops: [{ id: 'w1', name: 'Ferrow & Lisle', role: 'keeper' }],
+  may: ['book.read', 'book.hold'],
+  today: '2026-05-14',
+  book: { sequence: '4812', balanced: true },
+};
+
+export const LOT_ID = '7f1c2d3e-4a5b-4c6d-8e7f-90a1b2c3d4e5';
+
+export const FACTS = {
+  today: '2026-05-14',
+  closed_through: null,
+  periods: [],
+  lot_serial: '516',
+  currency: 'EUR',
+  time_zone: 'Europe/Dublin',
+  accounts: [],
+  lots: [
+    {
+      id: LOT_ID,
+      code: 'G26-0512-V',
+      form: 'sheet',
+      alloy: '750 yellow',
+      owner_id: null,
+      origin: 'recycled',
+      gold_permille: '750',
+      silver_permille: '125',
+      platinum_permille: '0',
+      palladium_permille: '0',
+      basis: 'computed',
+      standing: 'released',
+      hold_reason: null,
+      hold_until: null,
+      description: '750 yellow sheet, 1.2 mm',
+    },
+  ],
+  holdings: [],
+  job_holdings: [],
+  vouchers: [],
+  lot_entries: [],
+  handovers: [],
+  documents: [],
+  parties: [],
+  jobs: [],
+  people: [],
+  allowances: [],
+  settings: [],
+  unswept: [],
+  prices: [],
+};
