@@ -1,7 +1,8 @@
 /** What a form would post: each voucher as entries with their signs, balanced under a double rule. */
 import type { RecordDraft, VoucherDraft } from '../../../shared/book/draft.ts';
+import { draftSum, isBalanced } from '../../../shared/book/draft.ts';
 import type { Facts } from '../../../shared/book/facts.ts';
-import { METALS } from '../../../shared/mass/vector.ts';
+import { METALS, fineTotal } from '../../../shared/mass/vector.ts';
 import { ugFigure, words } from '../../lib/formats.ts';
 import { metalSymbol } from '../ui/metal-key.tsx';
 
@@ -15,13 +16,16 @@ export function namesOf(facts: Pick<Facts, 'accounts' | 'lots'>, records: readon
   const opened = new Map(
     records
       .filter((record) => record.kind === 'lot_described')
-      .map(({ detail }) => [detail['lot_id'], `new lot, ${String(detail['description'])}`] as const),
+      .map(({ detail }) => [detail['lot_id'], newLot(detail['description'])] as const),
   );
   return {
     account: (id) => facts.accounts.get(id)?.name ?? 'account',
     lot: (id) => facts.lots.get(id)?.code ?? opened.get(id) ?? 'lot',
   };
 }
+
+const newLot = (description: unknown): string =>
+  typeof description === 'string' ? `new lot, ${description}` : 'new lot';
 
 export function DraftPreview({
   records,
@@ -67,10 +71,10 @@ export function DraftPreview({
             ))}
           </tbody>
           <tfoot>
-            <tr className="total">
-              <td>Sum, it agrees</td>
-              <td className="num">0.000</td>
-              <td className="num">0.000</td>
+            <tr className={isBalanced(voucher.entries) ? 'total' : 'total open'}>
+              <th scope="row">{isBalanced(voucher.entries) ? 'Sum, it agrees' : 'Sum, it does not agree'}</th>
+              <td className="num">{ugFigure(draftSum(voucher.entries).gross)}</td>
+              <td className="num">{ugFigure(fineTotal(draftSum(voucher.entries)))}</td>
             </tr>
           </tfoot>
         </table>

@@ -2,7 +2,7 @@
 import { useEffect, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import { useQueryClient } from '@tanstack/react-query';
-import { z } from '../../../shared/schemas/zod.ts';
+import type { z } from '../../../shared/schemas/zod.ts';
 import { invitationInfo } from '../../../shared/schemas/identity.ts';
 import { Button } from '../../components/ui/button.tsx';
 import { Notice } from '../../components/ui/notice.tsx';
