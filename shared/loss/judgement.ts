@@ -12,14 +12,14 @@ export const FINDINGS = [
 export type Finding = (typeof FINDINGS)[number];
 
 /** The words of a finding, as on screen and in print. */
-export const FINDING_WORDS: Readonly<Record<Finding, string>> = {
+export const FINDING_WORDS = {
   within_weighing_error: 'Within weighing error',
   within_allowance: 'Within allowance',
   over_within_error: 'Over, within error',
   over_allowance: 'Over allowance',
   no_allowance: 'No allowance set',
   more_back: 'More back than out',
-};
+} as const satisfies Record<Finding, string>;
 
 /**
  * Judges a loss, all in micrograms of fine metal. "Over, within error" means that it passes its allowance by less than

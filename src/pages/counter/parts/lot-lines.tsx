@@ -1,0 +1,87 @@
+/** The lots of an act, chosen from what lies at the place, each with how much of it. */
+import type { Facts } from '../../../../shared/book/facts.ts';
+import { PIECE_FORMS } from '../../../../shared/book/lot.ts';
+import { Button } from '../../../components/ui/button.tsx';
+import { SelectField } from '../../../components/ui/select-field.tsx';
+import { ugFigure } from '../../../lib/formats.ts';
+import type { TypedAmount } from './amount.tsx';
+import { AmountFields, noAmount } from './amount.tsx';
+
+interface Line {
+  readonly lot_id: string;
+  readonly amount: TypedAmount;
+}
+
+interface LotLinesProps {
+  readonly facts: Facts;
+  readonly place_id: string;
+  readonly lines: readonly Line[];
+  readonly onChange: (lines: readonly Line[]) => void;
+  readonly errorOf: (field: string) => string | null;
+  readonly stated: boolean;
+  readonly single: boolean;
+}
+
+/** Lots that lie at a place, as options with what is there. */
+export function lotOptions(facts: Facts, place_id: string) {
+  return facts.holdings
+    .filter((held) => held.account_id === place_id && held.mass.gross > 0n)
+    .map((held) => ({ held, lot: facts.lots.get(held.lot_id) }))
+    .flatMap(({ held, lot }) =>
+      lot === undefined
+        ? []
+        : [
+            {
+              value: lot.id,
+              label: `${lot.code} ${lot.description}, ${ugFigure(held.mass.gross)} g${lot.standing === 'on_hold' ? ', on hold' : ''}`,
+            },
+          ],
+    );
+}
+
+export function LotLines({ facts, place_id, lines, onChange, errorOf, stated, single }: LotLinesProps) {
+  const options = lotOptions(facts, place_id);
+  const change = (index: number, line: Line) => onChange(lines.map((one, at) => (at === index ? line : one)));
+  if (place_id === '')
+    return <p className="none mt-4">Choose the place first; then the lots that lie there show here.</p>;
+  if (options.length === 0) return <p className="none mt-4">Nothing lies there.</p>;
+  return (
+    <div className="mt-5 grid gap-5">
+      {lines.map((line, index) => {
+        const form = facts.lots.get(line.lot_id)?.form;
+        return (
+          <div key={index} className="grid gap-3 border-t border-ink pt-3">
+            <SelectField
+              label={`Lot ${index + 1}`}
+              none="Choose a lot"
+              value={line.lot_id}
+              onChange={(lot_id) => change(index, { ...line, lot_id })}
+              options={options}
+              error={errorOf(single ? 'lot_id' : `lines.${index}.lot_id`)}
+            />
+            <AmountFields
+              value={line.amount}
+              onChange={(amount) => change(index, { ...line, amount })}
+              field={single ? 'amount' : `lines.${index}.amount`}
+              errorOf={errorOf}
+              stated={stated}
+              counted={PIECE_FORMS.some((counted) => counted === form)}
+            />
+            <div>
+              <Button kind="quiet" onPress={() => onChange(lines.filter((_, at) => at !== index))}>
+                Take the line away
+              </Button>
+            </div>
+          </div>
+        );
+      })}
+      {single && lines.length > 0 ? null : (
+        <div>
+          <Button icon="plus" onPress={() => onChange([...lines, { lot_id: '', amount: noAmount }])}>
+            Add a lot
+          </Button>
+        </div>
+      )}
+    </div>
+  );
+}

@@ -1,0 +1,151 @@
+/** Weighing in a delivery: line by line at the balance, beside what the invoice says; a difference asks for a decision. */
+import { useState } from 'react';
+import { DraftPreview, namesOf } from '../../components/domain/draft-preview.tsx';
+import { Button } from '../../components/ui/button.tsx';
+import { ErrorSummary } from '../../components/ui/error-summary.tsx';
+import { Page, Section } from '../../components/ui/page.tsx';
+import { SelectField } from '../../components/ui/select-field.tsx';
+import { TextField } from '../../components/ui/text-field.tsx';
+import { orNull } from '../../forms/typed.ts';
+import { useEventForm } from '../../forms/use-event-form.ts';
+import { useFacts } from '../../queries/facts.ts';
+import { useAccounts, useAlloys, useParties } from '../../queries/registers.ts';
+import { onlyPlace, placeOptions } from './parts/places.ts';
+import { PostBar } from './parts/post-bar.tsx';
+import { usePosted } from './parts/use-posted.ts';
+import type { ReceiptLine } from './parts/receipt-line.ts';
+import { emptyLine, lineBody } from './parts/receipt-line.ts';
+import { ReceiptFields } from './parts/receipt-fields.tsx';
+import { ReceiptReckoning } from './parts/receipt-reckoning.tsx';
+
+interface WeighInValues {
+  readonly party_id: string;
+  readonly safe_id: string;
+  readonly delivery_note: string;
+  readonly lines: readonly ReceiptLine[];
+}
+
+export function WeighIn() {
+  const accounts = useAccounts();
+  const parties = useParties();
+  const alloys = useAlloys();
+  const facts = useFacts({});
+  const posted = usePosted();
+  const [at, setAt] = useState(0);
+  const form = useEventForm<WeighInValues>({
+    event: 'weigh-in',
+    name: 'weigh-in',
+    initial: { party_id: '', safe_id: onlyPlace(accounts, 'safe'), delivery_note: '', lines: [emptyLine] },
+    toBody: (values) => ({
+      party_id: values.party_id,
+      safe_id: values.safe_id,
+      delivery_note: orNull(values.delivery_note),
+      lines: values.lines.map((line, index) => lineBody(line, `lines.${index}`, values.party_id)),
+    }),
+    onPosted: (answer) => {
+      setAt(0);
+      posted(answer);
+    },
+  });
+  const { values, set, errorOf } = form;
+  const line = values.lines[at] ?? emptyLine;
+  const change = (next: ReceiptLine) =>
+    set({ lines: values.lines.map((one, index) => (index === at ? next : one)) });
+  const senders = parties.filter((party) => party.kind === 'supplier' || party.kind === 'customer');
+  return (
+    <>
+      <Page title="Weigh in" lede="Booked is what the balance shows." margin="Counter">
+        <Section heading="Delivery">
+          <ErrorSummary errors={form.errors} shown={form.tried} />
+          <div className="fields">
+            <SelectField
+              label="From"
+              none="Choose supplier or customer"
+              value={values.party_id}
+              onChange={(party_id) => set({ party_id })}
+              options={senders.map(({ id, name, kind }) => ({
+                value: id,
+                label: name,
+                group: kind === 'supplier' ? 'Suppliers' : 'Customers',
+              }))}
+              error={errorOf('party_id')}
+            />
+            <TextField
+              label="Delivery note"
+              value={values.delivery_note}
+              onChange={(delivery_note) => set({ delivery_note })}
+              error={errorOf('delivery_note')}
+            />
+            <SelectField
+              label="Into"
+              none="Choose a safe"
+              value={values.safe_id}
+              onChange={(safe_id) => set({ safe_id })}
+              options={placeOptions(accounts, ['safe'])}
+              error={errorOf('safe_id')}
+            />
+          </div>
+        </Section>
+        <Section
+          heading={`Line ${at + 1}`}
+          notes={
+            <>
+              <p>A new lot is on hold until its acceptance checks are in.</p>
+              <p className="flex flex-col items-start gap-1">
+                {values.lines.map((one, index) => (
+                  <Button key={index} kind="quiet" onPress={() => setAt(index)}>
+                    {`${index + 1} ${one.description || 'not named yet'}${index === at ? ', at hand' : ''}`}
+                  </Button>
+                ))}
+                <Button
+                  kind="quiet"
+                  icon="plus"
+                  onPress={() => {
+                    set({ lines: [...values.lines, emptyLine] });
+                    setAt(values.lines.length);
+                  }}
+                >
+                  Add a line
+                </Button>
+                {values.lines.length > 1 ? (
+                  <Button
+                    kind="quiet"
+                    onPress={() => {
+                      set({ lines: values.lines.filter((_, index) => index !== at) });
+                      setAt(0);
+                    }}
+                  >
+                    Take this line away
+                  </Button>
+                ) : null}
+              </p>
+            </>
+          }
+        >
+          <ReceiptFields
+            line={line}
+            onChange={change}
+            field={`lines.${at}`}
+            errorOf={errorOf}
+            alloys={alloys}
+            isCustomer={senders.find((party) => party.id === values.party_id)?.kind === 'customer'}
+          />
+          <ReceiptReckoning
+            line={line}
+            facts={facts}
+            onDecide={(decision) => change({ ...line, decision })}
+            error={errorOf(`lines.${at}.decision`)}
+          />
+        </Section>
+        <Section heading="What will be posted">
+          {form.records === null ? (
+            <p className="none">Nothing yet. Enter the first line and its weight.</p>
+          ) : (
+            <DraftPreview records={form.records} names={namesOf(facts, form.records)} />
+          )}
+        </Section>
+      </Page>
+      <PostBar form={form} act="Post the weigh-in" />
+    </>
+  );
+}
