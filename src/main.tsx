@@ -4,7 +4,7 @@ import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
 import { RouterProvider } from 'react-router-dom';
 import { makeRouter } from './app/router.tsx';
-import { applyTheme } from './app/theme.ts';
+import { applyTheme } from './lib/theme.ts';
 import { ApiProblem } from './lib/api-client.ts';
 import './styles/main.css';
 

@@ -33,6 +33,8 @@ export interface EventFormOptions<Values extends object> {
   /** The JSON body of the event, from what is typed; may throw TypedError where a figure can't be read. */
   readonly toBody: (values: Values) => object;
   readonly onPosted?: (answer: EventAnswer) => void;
+  /** False for who may not read the book: then the server alone reckons what is posted. */
+  readonly preview?: boolean;
 }
 
 export interface EventForm<Values extends object> {
@@ -162,7 +164,9 @@ function usePreview<Values extends object>(options: EventFormOptions<Values>, va
   const event = EVENTS[options.event];
   const typed = typedBody(options, values);
   const parsed = typed.body === null ? null : event.schema.safeParse(typed.body);
-  const facts = usePreviewFacts(parsed?.success === true ? event.needs(parsed.data) : null);
+  const facts = usePreviewFacts(
+    parsed?.success === true && options.preview !== false ? event.needs(parsed.data) : null,
+  );
   const nothing = { body: typed.body, records: null, second_signature: null };
   if (typed.body === null) return { ...nothing, errors: typed.errors };
   if (parsed?.success !== true) {

@@ -1,0 +1,117 @@
+/** The paper slip of a handover: what, from whom, for which job; "I have it", or "Weight differs" with a weighing. */
+import { useState } from 'react';
+import type { HandoverRow } from '../../../shared/schemas/today.ts';
+import { FineCell } from '../../components/domain/fine-cell.tsx';
+import { Button } from '../../components/ui/button.tsx';
+import { ErrorSummary } from '../../components/ui/error-summary.tsx';
+import { StatusWord } from '../../components/ui/status-word.tsx';
+import { TextField } from '../../components/ui/text-field.tsx';
+import { useToast } from '../../components/ui/toast.tsx';
+import { WeightField } from '../../components/ui/weight-field.tsx';
+import { noWeighing, orNull, typedWeighing } from '../../forms/typed.ts';
+import { useEventForm } from '../../forms/use-event-form.ts';
+import { gramsFigure, momentText, numberText } from '../../lib/formats.ts';
+
+export function TakeOverSlip({ handover }: { readonly handover: HandoverRow }) {
+  const [differs, setDiffers] = useState(false);
+  const show = useToast();
+  const form = useEventForm({
+    event: 'acknowledge',
+    name: `acknowledge-${handover.voucher_id}`,
+    initial: {},
+    toBody: () => ({ voucher_id: handover.voucher_id, how: 'session' }),
+    onPosted: (answer) =>
+      show({
+        words: `Voucher ${numberText(answer.records.at(-1)?.sequence ?? '')}: you have taken it over.`,
+        to: null,
+      }),
+    preview: false,
+  });
+  return (
+    <div className="slip">
+      <p className="m-0 flex justify-between">
+        <span className="fig-label">{handover.place_name}</span>
+        <StatusWord status={handover.state === 'disputed' ? 'Disputed' : 'Waiting'} />
+      </p>
+      <div className="text-2xl">
+        <FineCell masses={handover} />
+      </div>
+      <p className="text-ink-2">
+        gross {gramsFigure(handover.gross_g)} g
+        {handover.lots.map((lot) => (
+          <span key={lot.id} className="block">
+            {lot.code} {lot.description}
+          </span>
+        ))}
+        from {handover.from_name}, {momentText(handover.recorded_at)}
+        {handover.job_code === null ? '' : `, job ${handover.job_code}`}
+      </p>
+      <ErrorSummary errors={form.errors} shown={form.tried} />
+      {handover.state === 'disputed' ? (
+        <p>The counter weighs it again before both of you.</p>
+      ) : differs ? (
+        <Dispute handover={handover} onKeep={() => setDiffers(false)} />
+      ) : (
+        <div className="flex flex-wrap gap-2">
+          <Button counter onPress={() => setDiffers(true)}>
+            Weight differs
+          </Button>
+          <Button
+            counter
+            kind="primary"
+            busy={form.busy ? 'Posting …' : false}
+            onPress={() => void form.submit()}
+          >
+            I have it
+          </Button>
+        </div>
+      )}
+    </div>
+  );
+}
+
+function Dispute({ handover, onKeep }: { readonly handover: HandoverRow; readonly onKeep: () => void }) {
+  const form = useEventForm({
+    event: 'dispute-handover',
+    name: `dispute-${handover.voucher_id}`,
+    initial: { gross: '', note: '' },
+    toBody: ({ gross, note }) => ({
+      voucher_id: handover.voucher_id,
+      how: 'session',
+      weighing: typedWeighing({ ...noWeighing, gross }, 'weighing'),
+      note: orNull(note),
+    }),
+    onPosted: onKeep,
+    preview: false,
+  });
+  return (
+    <div className="grid gap-3">
+      <ErrorSummary errors={form.errors} shown={form.tried} />
+      <WeightField
+        label="What your balance shows, all of it"
+        value={form.values.gross}
+        onChange={(gross) => form.set({ gross })}
+        error={form.errorOf('weighing.gross_g')}
+      />
+      <TextField
+        label="Remark"
+        value={form.values.note}
+        onChange={(note) => form.set({ note })}
+        error={form.errorOf('note')}
+      />
+      <div className="flex flex-wrap gap-2">
+        <Button counter onPress={onKeep}>
+          Weigh again first
+        </Button>
+        <Button
+          counter
+          kind="danger"
+          busy={form.busy ? 'Posting …' : false}
+          onPress={() => void form.submit()}
+        >
+          Dispute the weight
+        </Button>
+      </div>
+    </div>
+  );
+}
