@@ -105,9 +105,7 @@ function Plate() {
         className="flex items-center gap-3 text-plate-ink no-underline"
         aria-label={`${person.name}, ${person.role}: my account`}
       >
-        <span className="grid h-9 w-9 place-items-center rounded-full bg-plate-2 text-sm font-semibold">
-          {initials(person.name)}
-        </span>
+        <span className="initials">{initials(person.name)}</span>
         <span className="person-name">
           {person.name}, {person.role}
         </span>

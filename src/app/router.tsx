@@ -35,6 +35,7 @@ export function makeRouter(client: QueryClient) {
     {
       element: <Frame />,
       errorElement: <ErrorPage />,
+      hydrateFallbackElement: <p className="opening">Reading the book …</p>,
       loader: ({ request }) => guard(client, request),
       children: [{ errorElement: <ErrorPage />, children: inside }],
     },

@@ -11,7 +11,8 @@ export function FineCell({ masses }: { readonly masses: Omit<Masses, 'gross_g'> 
     <>
       {there.map((metal) => (
         <div key={metal} className="fig">
-          <b>{gramsFigure(masses[`${metal}_g`])}</b> {metalSymbol(metal)} <Swatch metal={metal} />
+          <b>{gramsFigure(masses[`${metal}_g`])}</b> <span className="symbol">{metalSymbol(metal)}</span>{' '}
+          <Swatch metal={metal} />
         </div>
       ))}
     </>

@@ -22,6 +22,8 @@ export interface Column<Row> {
   /** What sorting and CSV go by; none: the column does neither. */
   readonly value?: (row: Row) => string;
   readonly figure?: 'fine' | 'gross' | 'plain';
+  /** Repeats what the row's link shows: left out on a tablet, where width is short. */
+  readonly repeats?: boolean;
 }
 
 interface RegisterTableProps<Row> {
@@ -145,7 +147,7 @@ interface HeadProps<Row> {
 function Head<Row>({ column, direction, onSort }: HeadProps<Row>) {
   const order = direction === undefined ? undefined : direction.desc ? 'descending' : 'ascending';
   return (
-    <th scope="col" className={column.figure === undefined ? '' : 'num'} aria-sort={order}>
+    <th scope="col" className={cellClass({ ...column, figure: column.figure && 'plain' })} aria-sort={order}>
       {column.value === undefined ? (
         column.head
       ) : (
@@ -167,19 +169,21 @@ interface CellsProps<Row> {
 function Cells<Row>({ columns, content }: CellsProps<Row>) {
   return columns.map((column, index) =>
     index === 0 ? (
-      <th key={column.id} scope="row" className={`first ${figureClass(column.figure)}`}>
+      <th key={column.id} scope="row" className={`first ${cellClass(column)}`}>
         {content(column, index)}
       </th>
     ) : (
-      <td key={column.id} data-label={column.head} className={figureClass(column.figure)}>
+      <td key={column.id} data-label={column.head} className={cellClass(column)}>
         {content(column, index)}
       </td>
     ),
   );
 }
 
-const figureClass = (figure: Column<object>['figure']): string =>
-  figure === undefined ? '' : `num ${figure}`;
+type Look = Pick<Column<never>, 'figure' | 'repeats'>;
+
+const cellClass = ({ figure, repeats = false }: Look): string =>
+  `${figure === undefined ? '' : `num ${figure}`} ${repeats ? 'repeats' : ''}`;
 
 function csvOf<Row>(columns: readonly Column<Row>[], rows: readonly Row[]): string {
   const kept = columns.filter((column) => column.value !== undefined);

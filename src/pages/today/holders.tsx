@@ -34,22 +34,12 @@ export function Holders({ day }: { readonly day: TodayJson }) {
       id: 'holder',
       head: 'Holder',
       value: (row) => row.name,
-      cell: (row) => (
-        <span className="flex items-center gap-3">
-          <Icon name={placeIcon(row.kind)} size={20} />
-          <span>
-            <Link className="plain" to={`${paths.vouchers}?account_id=${row.account_id}`}>
-              <b>{row.name}</b>
-            </Link>
-            <br />
-            <small className="text-ink-2">{row.custodian_name ?? 'nobody in particular'}</small>
-          </span>
-        </span>
-      ),
+      cell: (row) => <HolderName row={row} />,
     },
     {
       id: 'lots',
       head: 'Lots held',
+      repeats: true,
       cell: (row) => (
         <span className="flex flex-col items-start gap-1">
           {row.lots.slice(0, SHOWN_LOTS).map((lot) => (
@@ -127,5 +117,20 @@ export function Holders({ day }: { readonly day: TodayJson }) {
           }
         : {})}
     />
+  );
+}
+
+function HolderName({ row }: { readonly row: Holder }) {
+  return (
+    <span className="flex items-center gap-3">
+      <Icon name={placeIcon(row.kind)} size={20} />
+      <span>
+        <Link className="plain" to={`${paths.vouchers}?account_id=${row.account_id}`}>
+          <b>{row.name}</b>
+        </Link>
+        <br />
+        <small className="text-ink-2">{row.custodian_name ?? 'nobody in particular'}</small>
+      </span>
+    </span>
   );
 }

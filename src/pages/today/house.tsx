@@ -5,6 +5,7 @@ import { Grams } from '../../components/ui/figure.tsx';
 import { MetalKey } from '../../components/ui/metal-key.tsx';
 import type { Column } from '../../components/ui/register-table.tsx';
 import { RegisterTable } from '../../components/ui/register-table.tsx';
+import { ShareBar, ShareKey } from '../../components/ui/share-bar.tsx';
 
 type Row = TodayJson['house'][number];
 
@@ -48,40 +49,32 @@ const COLUMNS: readonly Column<Row>[] = [
   { id: 'bar', head: 'Where it lies', cell: (row) => <Bar row={row} /> },
 ];
 
-const FILLS = ['var(--ink)', 'var(--brass-line)', 'var(--rule-strong)', 'var(--field)'];
+const PLACES = [
+  { name: 'Safe', ground: 'ink', grams: (row: Row) => row.safe_g },
+  { name: 'Benches and stations', ground: 'brass', grams: (row: Row) => row.benches_g },
+  { name: 'Sweeps bins', ground: 'grain', grams: (row: Row) => row.bins_g },
+  { name: 'Courier and refiner', ground: 'open', grams: (row: Row) => row.outside_g },
+] as const;
 
 function Bar({ row }: { readonly row: Row }) {
-  const whole = gramsText(row.house_g);
-  if (whole <= 0n) return null;
-  const parts = [row.safe_g, row.benches_g, row.bins_g, row.outside_g].map((grams) =>
-    Number.parseInt(((gramsText(grams) * 1000n) / whole).toString(), 10),
-  );
   return (
-    <svg width="200" height="12" viewBox="0 0 1000 12" preserveAspectRatio="none" aria-hidden="true">
-      {parts.map((part, index) => (
-        <rect
-          key={FILLS[index]}
-          x={parts.slice(0, index).reduce((sum, one) => sum + one, 0)}
-          y="1"
-          width={part}
-          height="10"
-          fill={FILLS[index]}
-          stroke="var(--ink)"
-          strokeWidth={part > 0 ? 1 : 0}
-        />
-      ))}
-    </svg>
+    <ShareBar
+      parts={PLACES.map(({ name, ground, grams }) => ({ name, ground, ug: gramsText(grams(row)) }))}
+    />
   );
 }
 
 export function House({ day }: { readonly day: TodayJson }) {
   return (
-    <RegisterTable
-      caption="Fine grams of the house by place"
-      columns={COLUMNS}
-      rows={day.house}
-      rowKey={(row) => row.metal}
-      empty="The house holds no metal yet. Weigh in the first delivery, or enter what is there under Counter, opening stock."
-    />
+    <>
+      <RegisterTable
+        caption="Fine grams of the house by place"
+        columns={COLUMNS}
+        rows={day.house}
+        rowKey={(row) => row.metal}
+        empty="The house holds no metal yet. Weigh in the first delivery, or enter what is there under Counter, opening stock."
+      />
+      {day.house.length === 0 ? null : <ShareKey parts={PLACES} />}
+    </>
   );
 }
