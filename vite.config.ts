@@ -9,7 +9,8 @@ export default defineConfig({
   server: {
     host: '127.0.0.1',
     strictPort: true,
-    proxy: { '/api': api, '/mail': api },
+    // The host as the browser names it, so that the server knows its own pages.
+    proxy: { '/api': { target: api, changeOrigin: false }, '/mail': { target: api, changeOrigin: false } },
     watch: { ignored: ['**/.grainward/**'] },
   },
   test: {
