@@ -38,6 +38,8 @@ server.listen(config.port, '127.0.0.1', () => {
 
 process.on('SIGTERM', () => void end());
 process.on('SIGINT', () => void end());
+// Started by another program that is gone: nobody is left to end this one.
+process.on('disconnect', () => void end());
 process.on('uncaughtException', (error) => {
   context.log.fatal({ err: error }, 'the process can’t go on safely');
   process.exit(1);

@@ -4,13 +4,15 @@ import { join } from 'node:path';
 import { begin, done, giveUp } from './say.mjs';
 import { run } from './run.mjs';
 
-/** npm packages after the lock file, where they are missing or older than it. */
-export async function npmPackages(root) {
+/** npm packages after the lock file, where they are missing or older than it; `development` ones too, for the tests. */
+export async function npmPackages(root, { development = false } = {}) {
   const marker = join(root, 'node_modules/.package-lock.json');
   const lock = join(root, 'package-lock.json');
-  if (existsSync(marker) && statSync(marker).mtimeMs >= statSync(lock).mtimeMs - 1000) return;
+  const fresh = existsSync(marker) && statSync(marker).mtimeMs >= statSync(lock).mtimeMs - 1000;
+  if (fresh && (!development || existsSync(join(root, 'node_modules/vitest')))) return;
   begin('Installing npm packages');
-  const { code } = await run('npm', ['ci', '--no-audit', '--no-fund'], { cwd: root });
+  const include = development ? ['--include=dev'] : [];
+  const { code } = await run('npm', ['ci', '--no-audit', '--no-fund', ...include], { cwd: root });
   if (code !== 0) giveUp('npm could not install the packages. Look at its lines above.');
   done('Installing npm packages');
 }

@@ -13,8 +13,10 @@ export function done(step, words = '') {
   process.stdout.write(`✓ ${step}${words === '' ? '' : `: ${words}`} (${seconds} s)\n`);
 }
 
-/** Says why the script can't go on, and ends it. */
+/** A reason, in a sentence, why a script can't go on. */
+export class CantGoOn extends Error {}
+
+/** Stops the script with a sentence; what it has started is ended on the way out. */
 export function giveUp(sentence) {
-  process.stderr.write(`\nGrainward can't go on: ${sentence}\n`);
-  process.exit(1);
+  throw new CantGoOn(sentence);
 }

@@ -2,55 +2,67 @@
  * `npm start`: from a fresh machine to a served workshop. Packages, database, schema, demo workshop, client, server,
  * each only where it is missing. `--dev` serves the client with hot reload and restarts the server on a change.
  */
-import { existsSync, mkdirSync, readFileSync, readdirSync, statSync } from 'node:fs';
+import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:net';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { startCluster } from './cluster.mjs';
-import { npmPackages, postgresPrograms } from './packages.mjs';
-import { end, run, start, whenEnding } from './run.mjs';
+import { database } from './database.mjs';
+import { npmPackages } from './packages.mjs';
+import { end, run, script, start, whenEnding } from './run.mjs';
 import { begin, done, giveUp } from './say.mjs';
 import { secrets } from './secrets.mjs';
+
+const FIRST_PORT = 4180;
+const FIRST_PAGES_PORT = 5180;
+const ANSWER_WITHIN_S = 30;
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
 const home = join(root, '.grainward');
 const dev = process.argv.includes('--dev');
-const tsx = join(root, 'node_modules/.bin/tsx');
-mkdirSync(home, { recursive: true });
+const program = (name) => join(root, 'node_modules/.bin', name);
 
-await npmPackages(root);
-const env = {
-  ...process.env,
-  ...secrets(home),
-  FILES_DIR: process.env.FILES_DIR ?? join(home, 'files'),
-  ...(await database()),
-};
+await script(main, { interrupted: 0 });
 
-await step('Bringing the schema up to date', tsx, ['server/cli/migrate.ts']);
-await step('Looking for the demo workshop', tsx, ['seed/index.ts']);
-if (!dev && clientIsOld())
-  await step('Building the client', join(root, 'node_modules/.bin/vite'), ['build', '--logLevel', 'warn']);
-await serve();
-
-async function database() {
-  if (process.env.DATABASE_URL && process.env.DATABASE_OWNER_URL) return {};
-  begin('Starting the database');
-  const cluster = await startCluster({ bin: await postgresPrograms(), home });
-  whenEnding(() => cluster.stop());
-  done('Starting the database');
-  return {
-    DATABASE_URL: cluster.url('grainward_app', 'grainward'),
-    DATABASE_OWNER_URL: cluster.url('grainward_owner', 'grainward'),
+async function main() {
+  mkdirSync(home, { recursive: true });
+  onlyOne();
+  await npmPackages(root);
+  const { app, owner } = await database({ root, home });
+  const env = {
+    ...process.env,
+    ...secrets(home),
+    FILES_DIR: process.env.FILES_DIR ?? join(home, 'files'),
+    DATABASE_URL: app,
+    LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
   };
+  delete env.DATABASE_OWNER_URL;
+  const asOwner = { ...env, DATABASE_OWNER_URL: owner };
+  await step('Bringing the schema up to date', process.execPath, tsx('server/cli/migrate.ts'), asOwner);
+  await step('Looking for the demo workshop', process.execPath, tsx('seed/index.ts'), asOwner);
+  if (!dev && clientIsOld())
+    await step('Building the client', program('vite'), ['build', '--logLevel', 'warn'], env);
+  await serve(env);
 }
 
-async function step(words, program, args) {
+/** Two starts in one folder would pull the database from under each other. */
+function onlyOne() {
+  const file = join(home, 'start.pid');
+  const other = existsSync(file) ? readFileSync(file, 'utf8').trim() : '';
+  const command = `/proc/${other}/cmdline`;
+  if (/^\d+$/.test(other) && existsSync(command) && readFileSync(command, 'utf8').includes('start.mjs'))
+    giveUp(`it is open already (process ${other}). Close that one first, with Ctrl-C.`);
+  writeFileSync(file, String(process.pid));
+  whenEnding(() => rmSync(file, { force: true }));
+}
+
+function tsx(file) {
+  return ['--import', 'tsx', file];
+}
+
+async function step(words, path, args, env) {
   begin(words);
-  const { code } = await run(program, args, { cwd: root, env });
-  if (code !== 0) {
-    process.stderr.write(`\n${words}: that failed, see above.\n`);
-    await end(1);
-  }
+  const { code } = await run(path, args, { cwd: root, env });
+  if (code !== 0) giveUp(`“${words}” failed, see above.`);
   done(words);
 }
 
@@ -63,7 +75,7 @@ function clientIsOld() {
     statSync(path).isDirectory()
       ? readdirSync(path).some((name) => newer(join(path, name)))
       : statSync(path).mtimeMs > since;
-  return ['src', 'shared', 'fonts', 'index.html', 'package-lock.json'].some((name) =>
+  return ['src', 'shared', 'fonts', 'index.html', 'vite.config.ts', 'package-lock.json'].some((name) =>
     newer(join(root, name)),
   );
 }
@@ -76,31 +88,40 @@ function isFree(port) {
   });
 }
 
-async function portToUse() {
-  if (process.env.PORT) return Number(process.env.PORT);
-  for (let port = 4180; port < 4230; port += 1) if (await isFree(port)) return port;
-  return giveUp('no port between 4180 and 4229 is free. Name one with PORT.');
+async function freeFrom(first) {
+  for (let port = first; port < first + 50; port += 1) if (await isFree(port)) return port;
+  return giveUp(`no port between ${first} and ${first + 49} is free. Name one with PORT.`);
 }
 
-async function serve() {
+async function portToUse() {
+  const named = process.env.PORT;
+  if (named === undefined) return freeFrom(FIRST_PORT);
+  if (!/^\d+$/.test(named) || !(await isFree(Number(named))))
+    giveUp(`port ${named}, which PORT names, can't be used. Name another, or none.`);
+  return Number(named);
+}
+
+async function serve(env) {
   const port = await portToUse();
-  const serverEnv = {
-    ...env,
-    PORT: String(port),
-    CLIENT_DIR: join(root, 'dist'),
-    LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
-  };
-  const server = start(tsx, [...(dev ? ['watch'] : []), 'server/index.ts'], { cwd: root, env: serverEnv });
+  const serverEnv = { ...env, PORT: String(port), CLIENT_DIR: join(root, 'dist') };
+  begin('Opening the book');
+  const server = dev
+    ? start(program('tsx'), ['watch', 'server/index.ts'], { cwd: root, env: serverEnv })
+    : start(process.execPath, tsx('server/index.ts'), {
+        cwd: root,
+        env: serverEnv,
+        stdio: ['ignore', 'inherit', 'inherit', 'ipc'],
+      });
   server.on('close', (code) => void end(code ?? 1));
   let address = `http://127.0.0.1:${port}`;
   await answers(`${address}/api/v1/health/ready`);
+  done('Opening the book');
   if (dev) {
-    const pages = (await isFree(5180)) ? 5180 : 5181;
-    start(join(root, 'node_modules/.bin/vite'), ['--port', String(pages)], {
-      cwd: root,
-      env: { ...env, API_PORT: String(port) },
-    });
+    const pages = await freeFrom(FIRST_PAGES_PORT);
+    const pagesEnv = { ...env, API_PORT: String(port) };
+    start(program('vite'), ['--port', String(pages), '--logLevel', 'warn'], { cwd: root, env: pagesEnv });
     address = `http://127.0.0.1:${pages}`;
+    await answers(address);
   }
   process.stdout.write(`\nGrainward is open at ${address}\n`);
   signIns();
@@ -108,22 +129,23 @@ async function serve() {
 }
 
 async function answers(url) {
-  for (let tries = 0; tries < 120; tries += 1) {
-    const there = await fetch(url)
-      .then((response) => response.ok)
-      .catch(() => false);
+  const until = Date.now() + ANSWER_WITHIN_S * 1_000;
+  while (Date.now() < until) {
+    const there = await fetch(url).then(
+      (response) => response.ok,
+      () => false,
+    );
     if (there) return;
-    await new Promise((resolve) => setTimeout(resolve, 250));
+    await new Promise((resolve) => setTimeout(resolve, 200));
   }
-  giveUp('the server did not answer within 30 seconds.');
+  giveUp(`${url} did not answer within ${ANSWER_WITHIN_S} seconds.`);
 }
 
 function signIns() {
   const file = join(home, 'demo-sign-ins.json');
   if (!existsSync(file)) return;
   process.stdout.write('\nThe demo workshop, signed in as:\n');
-  for (const { role, name, email, password } of JSON.parse(readFileSync(file, 'utf8'))) {
+  for (const { role, name, email, password } of JSON.parse(readFileSync(file, 'utf8')))
     process.stdout.write(`  ${role.padEnd(11)} ${name.padEnd(16)} ${email.padEnd(30)} ${password}\n`);
-  }
-  process.stdout.write('E-mails that the demo sends are shown under /mail.\n');
+  if (!process.env.SMTP_URL) process.stdout.write('E-mails that the demo sends are shown under /mail.\n');
 }

@@ -1,69 +1,69 @@
 /**
- * `npm test`: everything, on a throw-away database. Types, lint and format first, then every test. `npm test -- PATH`
- * runs the tests below a path only. Ends with one line, "N passed, N failed".
+ * `npm test`: everything, on a throw-away database. Types, lint, format and build first, then every test;
+ * `npm test -- PATH` runs the tests below a path only. Ends with one line, "N passed, N failed".
  */
 import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { startCluster } from './cluster.mjs';
-import { chromium, npmPackages, postgresPrograms } from './packages.mjs';
-import { end, run, whenEnding } from './run.mjs';
+import { database } from './database.mjs';
+import { chromium, npmPackages } from './packages.mjs';
+import { run, script, whenEnding } from './run.mjs';
 import { begin, done } from './say.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
+const program = (name) => join(root, 'node_modules/.bin', name);
 const only = process.argv.slice(2);
-const bin = (name) => join(root, 'node_modules/.bin', name);
+const everything = only.length === 0;
+const inBrowser = everything || only.some((path) => path.includes('tests/browser'));
 let passed = 0;
 let failed = 0;
 
-await npmPackages(root);
-await chromium();
-const home = mkdtempSync(join(tmpdir(), 'grainward-test-'));
-whenEnding(() => rmSync(home, { recursive: true, force: true }));
-begin('Starting a throw-away database');
-const cluster = await startCluster({ bin: await postgresPrograms(), home, throwAway: true });
-whenEnding(async () => {
-  await cluster.stop();
-  cluster.remove();
-});
-done('Starting a throw-away database');
-const env = {
-  ...process.env,
-  TEST_DATABASE_URL: cluster.url('grainward_owner', 'postgres'),
-  TEST_DATABASE_APP_URL: cluster.url('grainward_app', 'postgres'),
-};
+await script(main, { interrupted: 130 });
 
-if (only.length === 0) {
-  await check('Types', bin('tsc'), ['--noEmit']);
-  await check('Lint', bin('eslint'), ['.', '--max-warnings', '0']);
-  await check('Format', bin('prettier'), ['--check', '.', '--log-level', 'warn']);
-  await check('Building the client', bin('vite'), ['build', '--logLevel', 'warn']);
+async function main() {
+  await npmPackages(root, { development: true });
+  if (inBrowser) await chromium();
+  const home = mkdtempSync(join(tmpdir(), 'grainward-test-'));
+  whenEnding(() => rmSync(home, { recursive: true, force: true }));
+  const { owner, app } = await database({ root, home, throwAway: true, name: 'postgres' });
+  const env = { ...process.env, NODE_ENV: 'test', TEST_DATABASE_URL: owner, TEST_DATABASE_APP_URL: app };
+  if (everything) {
+    await check('Types', program('tsc'), ['--noEmit'], env);
+    await check('Lint', program('eslint'), ['.', '--max-warnings', '0'], env);
+    await check('Format', program('prettier'), ['--check', '.', '--log-level', 'warn'], env);
+  }
+  if (inBrowser) {
+    const forPages = { ...env, NODE_ENV: 'production' };
+    await check('Building the client', program('vite'), ['build', '--logLevel', 'warn'], forPages);
+  }
+  await tests(home, env);
+  process.stdout.write(`\n${passed} passed, ${failed} failed\n`);
+  return failed === 0 ? 0 : 1;
 }
-await tests();
-process.stdout.write(`\n${passed} passed, ${failed} failed\n`);
-await end(failed === 0 ? 0 : 1);
 
-async function check(name, program, args) {
+async function check(name, path, args, env) {
   begin(name);
-  const { code } = await run(program, args, { cwd: root, env });
+  const { code } = await run(path, args, { cwd: root, env });
   if (code === 0) passed += 1;
   else failed += 1;
   done(name, code === 0 ? 'passed' : 'FAILED');
 }
 
-async function tests() {
+async function tests(home, env) {
   begin('Tests');
   const report = join(home, 'report.json');
-  const { code } = await run(
-    bin('vitest'),
-    ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`, ...only],
-    { cwd: root, env },
-  );
-  const counts = existsSync(report) ? JSON.parse(readFileSync(report, 'utf8')) : null;
-  passed += counts?.numPassedTests ?? 0;
-  failed += counts?.numFailedTests ?? 0;
+  const reporters = ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`];
+  const { code } = await run(program('vitest'), ['run', ...reporters, ...only], { cwd: root, env });
+  const { testResults = [] } = existsSync(report) ? JSON.parse(readFileSync(report, 'utf8')) : {};
+  const inTests = (state) =>
+    testResults.flatMap((file) => file.assertionResults).filter((test) => test.status === state).length;
   // A file that can't be loaded has no test that could fail, yet it has failed.
-  if (code !== 0 && (counts?.numFailedTests ?? 0) === 0) failed += 1;
+  const broken = testResults.filter(
+    (file) => file.status === 'failed' && !file.assertionResults.some((test) => test.status === 'failed'),
+  ).length;
+  passed += inTests('passed');
+  failed += inTests('failed') + broken;
+  if (code !== 0 && inTests('failed') + broken === 0) failed += 1;
   done('Tests', code === 0 ? 'passed' : 'FAILED');
 }
