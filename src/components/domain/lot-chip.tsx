@@ -29,6 +29,17 @@ const FORM_ICONS: Readonly<Record<LotForm, IconName>> = {
 
 export const formIcon = (form: LotForm): IconName => FORM_ICONS[form];
 
+/** A code with its check character in a lighter weight. */
+export function LotCode({ code }: { readonly code: string }) {
+  const at = code.lastIndexOf('-');
+  return (
+    <>
+      <b>{code.slice(0, at)}</b>
+      <span className="check-char">{code.slice(at)}</span>
+    </>
+  );
+}
+
 interface LotChipProps {
   readonly id: string;
   readonly code: string;
@@ -39,15 +50,13 @@ interface LotChipProps {
 }
 
 export function LotChip({ id, code, form, description, standing, owner }: LotChipProps) {
-  const at = code.lastIndexOf('-');
   const held = standing === 'on_hold';
   return (
     <span className="chip-wrap">
       <Link className={`chip ${standing ?? ''}`} to={`/lots/${id}`}>
         <Icon name={held ? 'hold' : formIcon(form)} size={16} />
         <span>
-          <b>{code.slice(0, at)}</b>
-          <span className="check-char">{code.slice(at)}</span> {description}
+          <LotCode code={code} /> {description}
           {held ? ', on hold' : standing === 'spent' ? ', spent' : ''}
           {owner ? `, ${owner}` : ''}
         </span>

@@ -9,7 +9,7 @@ import { TextField } from '../../components/ui/text-field.tsx';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { numberText } from '../../lib/formats.ts';
 import { useToday } from '../../queries/today.ts';
-import { usePosted } from './parts/use-posted.ts';
+import { usePosted } from '../../components/domain/use-posted.ts';
 
 export function Explain() {
   const { id = '' } = useParams();

@@ -14,8 +14,8 @@ import { useEventForm } from '../../forms/use-event-form.ts';
 import { gramsFigure } from '../../lib/formats.ts';
 import { useToday } from '../../queries/today.ts';
 import type { HandoverRow } from '../../../shared/schemas/today.ts';
-import { usePosted } from './parts/use-posted.ts';
-import { WeighingFields } from './parts/weighing-fields.tsx';
+import { usePosted } from '../../components/domain/use-posted.ts';
+import { WeighingFields } from '../../components/domain/weighing-fields.tsx';
 
 export function Handover() {
   const { id = '' } = useParams();

@@ -14,12 +14,12 @@ import { useFacts } from '../../queries/facts.ts';
 import { useAccounts, useJobs } from '../../queries/registers.ts';
 import { useToday } from '../../queries/today.ts';
 import { useWrite } from '../../queries/writes.ts';
-import type { TypedAmount } from './parts/amount.tsx';
-import { AmountFields, noAmount, typedAmount } from './parts/amount.tsx';
-import { lotOptions } from './parts/lot-lines.tsx';
-import { onlyPlace, placeOptions } from './parts/places.ts';
-import { PostBar } from './parts/post-bar.tsx';
-import { usePosted } from './parts/use-posted.ts';
+import type { TypedAmount } from '../../components/domain/amount.tsx';
+import { AmountFields, noAmount, typedAmount } from '../../components/domain/amount.tsx';
+import { lotOptions } from '../../components/domain/lot-options.ts';
+import { onlyPlace, placeOptions } from '../../components/domain/places.ts';
+import { PostBar } from '../../components/domain/post-bar.tsx';
+import { usePosted } from '../../components/domain/use-posted.ts';
 
 interface IssueValues {
   readonly from_id: string;

@@ -11,9 +11,9 @@ import { useAccounts, useJobs, useParties } from '../../queries/registers.ts';
 import type { MoveDefinition, MoveValues } from './moves.ts';
 import { MOVES } from './moves.ts';
 import { LotLines } from './parts/lot-lines.tsx';
-import { onlyPlace, placeOptions } from './parts/places.ts';
-import { PostBar } from './parts/post-bar.tsx';
-import { usePosted } from './parts/use-posted.ts';
+import { onlyPlace, placeOptions } from '../../components/domain/places.ts';
+import { PostBar } from '../../components/domain/post-bar.tsx';
+import { usePosted } from '../../components/domain/use-posted.ts';
 
 export function Move() {
   const { what = '' } = useParams();

@@ -2,8 +2,8 @@
 import type { AccountKind } from '../../../shared/book/account.ts';
 import type { EventName } from '../../../shared/events/definition.ts';
 import { orNull } from '../../forms/typed.ts';
-import type { TypedAmount } from './parts/amount.tsx';
-import { typedAmount } from './parts/amount.tsx';
+import type { TypedAmount } from '../../components/domain/amount.tsx';
+import { typedAmount } from '../../components/domain/amount.tsx';
 
 export interface MoveValues {
   readonly from_id: string;

@@ -8,12 +8,12 @@ import { typedWeighing } from '../../forms/typed.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { useFacts } from '../../queries/facts.ts';
 import { useAccounts, useAlloys } from '../../queries/registers.ts';
-import { onlyPlace, placeOptions } from './parts/places.ts';
-import { PostBar } from './parts/post-bar.tsx';
+import { onlyPlace, placeOptions } from '../../components/domain/places.ts';
+import { PostBar } from '../../components/domain/post-bar.tsx';
 import { ReceiptFields } from './parts/receipt-fields.tsx';
 import type { ReceiptLine } from './parts/receipt-line.ts';
 import { emptyLine, newLotBody } from './parts/receipt-line.ts';
-import { usePosted } from './parts/use-posted.ts';
+import { usePosted } from '../../components/domain/use-posted.ts';
 
 interface OpeningLine {
   readonly place_id: string;

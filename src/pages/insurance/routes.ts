@@ -3,6 +3,8 @@ import type { RouteObject } from 'react-router-dom';
 import { paths } from '../../app/paths.ts';
 
 export const insuranceRoutes: RouteObject[] = [
-  { path: paths.insurance, lazy: async () => ({ Component: (await import('./audit-export.tsx')).AuditExportPage }) },
-  { path: paths.verify, lazy: async () => ({ Component: (await import('./verify.tsx')).VerifyPage }) },
+  {
+    path: paths.insurance,
+    lazy: async () => ({ Component: (await import('./audit-export.tsx')).AuditExportPage }),
+  },
 ];

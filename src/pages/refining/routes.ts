@@ -10,7 +10,10 @@ export const refiningRoutes: RouteObject[] = [
     path: paths.consignment(':id'),
     lazy: async () => ({ Component: (await import('./consignment.tsx')).ConsignmentPage }),
   },
-  { path: paths.outturn(':id'), lazy: async () => ({ Component: (await import('./outturn.tsx')).OutturnPage }) },
+  {
+    path: paths.outturn(':id'),
+    lazy: async () => ({ Component: (await import('./outturn.tsx')).OutturnPage }),
+  },
   {
     path: paths.metalAccounts,
     lazy: async () => ({ Component: (await import('./metal-accounts.tsx')).MetalAccountsPage }),

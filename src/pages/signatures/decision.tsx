@@ -45,7 +45,10 @@ export function Decision({ request }: { readonly request: SignatureRequest }) {
     run(async (key) => {
       const posted = (await decide.sign(request.id, key)).records.at(-1);
       if (posted === undefined) return;
-      toast({ words: `Voucher ${numberText(posted.sequence)} is signed and posted.`, to: paths.voucher(posted.id) });
+      toast({
+        words: `Voucher ${numberText(posted.sequence)} is signed and posted.`,
+        to: paths.voucher(posted.id),
+      });
     });
   const withdraw = () =>
     run(async (key) => {

@@ -18,7 +18,9 @@ export function RequestPreview({ preview }: { readonly preview: DraftPreview }) 
 
 function DraftTable({ draft, preview }: { readonly draft: Draft; readonly preview: DraftPreview }) {
   const accounts = useAccounts();
-  const opened = new Set(preview.flatMap(({ detail }) => (typeof detail['lot_id'] === 'string' ? [detail['lot_id']] : [])));
+  const opened = new Set(
+    preview.flatMap(({ detail }) => (typeof detail['lot_id'] === 'string' ? [detail['lot_id']] : [])),
+  );
   const known = draft.entries.map(({ lot_id }) => lot_id).filter((id) => !opened.has(id));
   const { lots } = useFacts({ lot_ids: [...new Set(known)] });
   const reason = draft.detail['reason'];
@@ -46,7 +48,9 @@ function DraftTable({ draft, preview }: { readonly draft: Draft; readonly previe
             const lot = lots.get(entry.lot_id);
             return (
               <tr key={`${entry.account_id}${entry.lot_id}${at}`}>
-                <th scope="row">{accounts.find(({ id }) => id === entry.account_id)?.name ?? 'a new account'}</th>
+                <th scope="row">
+                  {accounts.find(({ id }) => id === entry.account_id)?.name ?? 'a new account'}
+                </th>
                 <td>{lot === undefined ? 'a new lot' : <Link to={paths.lot(lot.id)}>{lot.code}</Link>}</td>
                 <td className="num fine">
                   {METALS.filter((metal) => !isNothing(entry[`${metal}_g`])).map((metal) => (

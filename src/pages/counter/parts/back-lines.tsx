@@ -10,8 +10,8 @@ import { TextField } from '../../../components/ui/text-field.tsx';
 import { ugFigure } from '../../../lib/formats.ts';
 import type { BackKind, BackLine } from './back-line.ts';
 import { BACK_WORDS, backLine, fieldOf } from './back-line.ts';
-import { placeOptions } from './places.ts';
-import { WeighingFields } from './weighing-fields.tsx';
+import { placeOptions } from '../../../components/domain/places.ts';
+import { WeighingFields } from '../../../components/domain/weighing-fields.tsx';
 
 interface BackLinesProps {
   readonly facts: Facts;

@@ -3,9 +3,9 @@ import type { Facts } from '../../../../shared/book/facts.ts';
 import { PIECE_FORMS } from '../../../../shared/book/lot.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { SelectField } from '../../../components/ui/select-field.tsx';
-import { ugFigure } from '../../../lib/formats.ts';
-import type { TypedAmount } from './amount.tsx';
-import { AmountFields, noAmount } from './amount.tsx';
+import type { TypedAmount } from '../../../components/domain/amount.tsx';
+import { lotOptions } from '../../../components/domain/lot-options.ts';
+import { AmountFields, noAmount } from '../../../components/domain/amount.tsx';
 
 interface Line {
   readonly lot_id: string;
@@ -20,23 +20,6 @@ interface LotLinesProps {
   readonly errorOf: (field: string) => string | null;
   readonly stated: boolean;
   readonly single: boolean;
-}
-
-/** Lots that lie at a place, as options with what is there. */
-export function lotOptions(facts: Facts, place_id: string) {
-  return facts.holdings
-    .filter((held) => held.account_id === place_id && held.mass.gross > 0n)
-    .map((held) => ({ held, lot: facts.lots.get(held.lot_id) }))
-    .flatMap(({ held, lot }) =>
-      lot === undefined
-        ? []
-        : [
-            {
-              value: lot.id,
-              label: `${lot.code} ${lot.description}, ${ugFigure(held.mass.gross)} g${lot.standing === 'on_hold' ? ', on hold' : ''}`,
-            },
-          ],
-    );
 }
 
 export function LotLines({ facts, place_id, lines, onChange, errorOf, stated, single }: LotLinesProps) {

@@ -6,7 +6,7 @@ import { TextField } from '../../../components/ui/text-field.tsx';
 import { WeightField } from '../../../components/ui/weight-field.tsx';
 import { words } from '../../../lib/formats.ts';
 import type { ReceiptLine } from './receipt-line.ts';
-import { WeighingFields } from './weighing-fields.tsx';
+import { WeighingFields } from '../../../components/domain/weighing-fields.tsx';
 
 interface ReceiptFieldsProps {
   readonly line: ReceiptLine;

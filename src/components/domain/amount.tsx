@@ -1,10 +1,10 @@
 /** How much of a lot leaves a place: weighed, by count, all of it, or stated where nobody could weigh it. */
-import type { TypedWeighing } from '../../../forms/typed.ts';
-import { noWeighing, typedGrams, typedWeighing } from '../../../forms/typed.ts';
-import { CheckBox } from '../../../components/ui/choice.tsx';
-import { SelectField } from '../../../components/ui/select-field.tsx';
-import { TextField } from '../../../components/ui/text-field.tsx';
-import { WeightField } from '../../../components/ui/weight-field.tsx';
+import type { TypedWeighing } from '../../forms/typed.ts';
+import { noWeighing, typedGrams, typedWeighing } from '../../forms/typed.ts';
+import { CheckBox } from '../ui/choice.tsx';
+import { SelectField } from '../ui/select-field.tsx';
+import { TextField } from '../ui/text-field.tsx';
+import { WeightField } from '../ui/weight-field.tsx';
 import { WeighingFields } from './weighing-fields.tsx';
 
 export interface TypedAmount {

@@ -1,6 +1,6 @@
 /** The bar at the foot of a counter screen: how it stands, the quiet way, the act that posts. */
-import type { EventForm } from '../../../forms/use-event-form.ts';
-import { Button } from '../../../components/ui/button.tsx';
+import type { EventForm } from '../../forms/use-event-form.ts';
+import { Button } from '../ui/button.tsx';
 
 interface PostBarProps<Values extends object> {
   readonly form: EventForm<Values>;

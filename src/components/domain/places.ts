@@ -1,7 +1,7 @@
 /** Places as options of a field, by their kinds. */
-import type { AccountKind } from '../../../../shared/book/account.ts';
-import type { AccountRow } from '../../../../shared/schemas/registers.ts';
-import type { Option } from '../../../components/ui/select-field.tsx';
+import type { AccountKind } from '../../../shared/book/account.ts';
+import type { AccountRow } from '../../../shared/schemas/registers.ts';
+import type { Option } from '../ui/select-field.tsx';
 
 /** Open places of the kinds, with who answers for them. */
 export function placeOptions(

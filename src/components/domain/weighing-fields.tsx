@@ -1,6 +1,6 @@
 /** Gross, tare and stones of one weighing. */
-import type { TypedWeighing } from '../../../forms/typed.ts';
-import { WeightField } from '../../../components/ui/weight-field.tsx';
+import type { TypedWeighing } from '../../forms/typed.ts';
+import { WeightField } from '../ui/weight-field.tsx';
 
 interface WeighingFieldsProps {
   readonly value: TypedWeighing;
