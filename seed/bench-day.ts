@@ -57,12 +57,21 @@ export async function benchDay(
     (out - unused) * (bench.loss / 10_000) * dice.number.float({ min: 0.6, max: 1.35 }),
   );
   const made = out - unused - scrap - Math.round(filings * 0.985) - loss;
+  const trays = { scrap: `scrap ${bench.alloy}`, filings: `filings ${bench.place}` };
   const work = {
     job_id,
     operation: bench.operation,
     unused: [{ lot_id: sheet, weighing: { gross_g: milligrams(unused) } }],
-    scrap: [{ from_lot_id: sheet, weighing: { gross_g: milligrams(scrap) } }],
-    filings: [{ weighing: { gross_g: milligrams(filings) } }],
+    scrap: [
+      {
+        from_lot_id: sheet,
+        into_lot_id: stock.trays.get(trays.scrap) ?? null,
+        weighing: { gross_g: milligrams(scrap) },
+      },
+    ],
+    filings: [
+      { into_lot_id: stock.trays.get(trays.filings) ?? null, weighing: { gross_g: milligrams(filings) } },
+    ],
     made: [
       {
         form: 'finished_work',
@@ -79,6 +88,9 @@ export async function benchDay(
     works: [work],
   });
   stock.putBack(bench.alloy, sheet, unused);
+  const [, firstScrap, firstFilings] = back.lots;
+  if (firstScrap !== undefined) stock.trays.set(trays.scrap, firstScrap.id);
+  if (firstFilings !== undefined) stock.trays.set(trays.filings, firstFilings.id);
   return { lot_id: back.lots[0]?.id ?? '', alloy: bench.alloy, mg: made, customer };
 }
 

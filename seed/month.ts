@@ -21,21 +21,21 @@ const DELIVERY = [
     form: 'sheet',
     description: '750 yellow sheet, 1.2 mm',
     fine: { gold_permille: '750', silver_permille: '125' },
-    mg: 560_000,
+    mg: 420_000,
   },
   {
     alloy: '750 white, palladium',
     form: 'wire',
     description: '750 white wire, 1.6 mm',
     fine: { gold_permille: '750', silver_permille: '100', palladium_permille: '150' },
-    mg: 420_000,
+    mg: 380_000,
   },
   {
     alloy: '925 silver',
     form: 'sheet',
     description: '925 silver sheet, 1.0 mm',
     fine: { silver_permille: '925' },
-    mg: 640_000,
+    mg: 460_000,
   },
 ] as const;
 

@@ -6,6 +6,8 @@ interface Pile {
 
 export class Stock {
   readonly #piles = new Map<string, Pile[]>();
+  /** The open tray of a kind ("scrap 750 yellow"): what comes back joins it. */
+  readonly trays = new Map<string, string>();
 
   add(alloy: string, lot_id: string, mg: number): void {
     this.#piles.set(alloy, [...(this.#piles.get(alloy) ?? []), { lot_id, mg }]);
