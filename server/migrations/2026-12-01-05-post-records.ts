@@ -102,7 +102,8 @@ export const postRecords: Migration = {
         whole := (part->>'head') || '"previous_hash":"' || prior || '","recorded_at":"' || stamp || '",' || (part->>'middle')
           || '"sequence":"' || n || '"}';
         d := whole::jsonb;
-        IF (SELECT count(*) FROM json_object_keys(whole::json)) <> 13 OR d->>'previous_hash' <> prior
+        -- Thirteen keys, each once: a key that stands twice would be read as one thing and hashed as another.
+        IF (SELECT count(*) <> 13 OR count(DISTINCT x.name) <> 13 FROM json_object_keys(whole::json) AS x(name)) OR d->>'previous_hash' <> prior
           OR d->>'sequence' <> n::text OR d->>'recorded_at' <> stamp THEN
           RAISE EXCEPTION 'the parts of a record do not make its line' USING ERRCODE = 'GW005';
         END IF;
