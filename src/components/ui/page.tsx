@@ -4,6 +4,8 @@ import { useEffect, useRef } from 'react';
 
 interface PageProps {
   readonly title: string;
+  /** The title as it is drawn, where it is more than its words. */
+  readonly drawn?: ReactNode;
   readonly lede?: ReactNode;
   readonly actions?: ReactNode;
   /** What the margin of the first entry says. */
@@ -14,7 +16,7 @@ interface PageProps {
   readonly first?: ReactNode;
 }
 
-export function Page({ title, lede, actions, margin, nav, first, children }: PageProps) {
+export function Page({ title, drawn = title, lede, actions, margin, nav, first, children }: PageProps) {
   const heading = useRef<HTMLHeadingElement>(null);
   useEffect(() => {
     document.title = `${title} · Grainward`;
@@ -28,7 +30,7 @@ export function Page({ title, lede, actions, margin, nav, first, children }: Pag
           {nav}
           <div className="page-head">
             <h1 tabIndex={-1} ref={heading}>
-              {title}
+              {drawn}
             </h1>
             {lede === undefined ? null : <span className="lede">{lede}</span>}
             {actions === undefined ? null : <div className="actions">{actions}</div>}

@@ -1,5 +1,6 @@
 /** One line of text, a password, a date, or several lines. */
 import { useState } from 'react';
+import { DateLine } from './date-line.tsx';
 import { Field } from './field.tsx';
 import type { ControlAttributes, FieldProps } from './field.tsx';
 
@@ -38,6 +39,7 @@ export function TextField(props: TextFieldProps) {
 function Line(props: TextFieldProps & { readonly attributes: ControlAttributes }) {
   const { attributes, value, onChange, type = 'text', autoComplete = 'off', inputMode, required } = props;
   const [shown, setShown] = useState(false);
+  if (type === 'date') return <DateLine {...{ attributes, value, onChange, required }} />;
   return (
     <>
       <input

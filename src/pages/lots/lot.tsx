@@ -3,7 +3,8 @@ import { useParams } from 'react-router-dom';
 import { Link } from 'react-router-dom';
 import type { LotWhole } from '../../../shared/schemas/lots.ts';
 import { paths } from '../../app/paths.ts';
-import { formIcon } from '../../components/domain/lot-chip.tsx';
+import { kindIcon } from '../../components/domain/kind-icon.ts';
+import { LotCode, formIcon } from '../../components/domain/lot-chip.tsx';
 import { FineCell } from '../../components/domain/fine-cell.tsx';
 import { LinkButton } from '../../components/ui/button.tsx';
 import { CompositionBar } from '../../components/ui/composition-bar.tsx';
@@ -31,11 +32,12 @@ export function Lot() {
   return (
     <Page
       title={lot.code}
-      lede={
+      drawn={
         <>
-          <Icon name={formIcon(lot.form)} /> {lot.description}
+          <Icon name={formIcon(lot.form)} size={30} /> <LotCode code={lot.code} />
         </>
       }
+      lede={lot.description}
       margin="Lot"
       actions={
         <>
@@ -153,7 +155,7 @@ function Trail({ lot }: { readonly lot: LotWhole }) {
         <li key={step.sequence}>
           <span className="text-ink-2">{momentText(step.recorded_at)}</span>
           <span className="mark">
-            <Icon name="book" size={18} />
+            <Icon name={kindIcon(step.kind)} size={18} />
           </span>
           <span>
             <b>{words(step.kind)}</b>
