@@ -41,6 +41,8 @@ export default defineConfig({
           testTimeout: 30_000,
           hookTimeout: 60_000,
           maxWorkers: 2,
+          // Projects with different numbers of workers run one after the other.
+          sequence: { groupOrder: 1 },
         },
       },
       {
@@ -52,6 +54,7 @@ export default defineConfig({
           testTimeout: 120_000,
           hookTimeout: 180_000,
           maxWorkers: 1,
+          sequence: { groupOrder: 2 },
         },
       },
     ],
