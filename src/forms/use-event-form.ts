@@ -39,7 +39,7 @@ export interface EventFormOptions<Values extends object> {
 
 export interface EventForm<Values extends object> {
   readonly values: Values;
-  set(change: Partial<Values>): void;
+  readonly set: (change: Partial<Values>) => void;
   /** What would be posted, where everything fits. */
   readonly records: readonly RecordDraft[] | null;
   /** Why two people have to sign, where they have to. */
@@ -47,12 +47,12 @@ export interface EventForm<Values extends object> {
   /** What keeps it from being posted; shown once posting was tried. */
   readonly errors: readonly FieldError[];
   readonly tried: boolean;
-  errorOf(field: string): string | null;
+  readonly errorOf: (field: string) => string | null;
   readonly busy: boolean;
   readonly offline: boolean;
-  submit(): Promise<void>;
+  readonly submit: () => Promise<void>;
   /** Empties the form. */
-  reset(): void;
+  readonly reset: () => void;
   readonly answer: EventAnswer | null;
 }
 

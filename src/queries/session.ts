@@ -15,7 +15,7 @@ export const sessionQuery = queryOptions({
 
 export interface Session extends SessionJson {
   /** Whether the role that one has here may do an action. */
-  can(action: Action): boolean;
+  readonly can: (action: Action) => boolean;
 }
 
 export function useSession(): Session {

@@ -59,12 +59,7 @@ export function SweepUpPage() {
         margin={
           <p>The estimate is taken out of the loss accounts, and stays an estimate until the outturn.</p>
         }
-        first={
-          <Notice severity="near" what="Dust and residues harm.">
-            Damp the floor before sweeping and wear a filter mask. Spent acids and baths keep their own marked
-            vessels and never go into a bin. The rules of your place on dust and chemicals come first.
-          </Notice>
-        }
+        first={<Cautions />}
       >
         <Section
           heading="The container"
@@ -124,5 +119,15 @@ export function SweepUpPage() {
       </Page>
       <PostBar form={form} act="Post the sweep-up" />
     </>
+  );
+}
+
+/** Common practice, no source; what the place's own rules say comes first. */
+function Cautions() {
+  return (
+    <Notice severity="near" what="Dust and residues harm.">
+      Damp the floor before sweeping and wear a filter mask. Spent acids and baths keep their own marked
+      vessels and never go into a bin. The rules of your place on dust and chemicals come first.
+    </Notice>
   );
 }

@@ -193,7 +193,7 @@ function LossTable({
 }
 
 function figure(
-  id: keyof Row & string,
+  id: keyof Row,
   head: string,
   text: (row: Row) => string,
   look: 'fine' | 'gross' | 'plain',
