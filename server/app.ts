@@ -6,10 +6,14 @@ import express from 'express';
 import type { Express } from 'express';
 import { pinoHttp } from 'pino-http';
 import { randomUUID } from 'node:crypto';
+import type { LocalMail } from './adapters/mail/local-mail.ts';
 import type { AppContext } from './context.ts';
 import { securityHeaders } from './middleware/headers.ts';
 import { problemHandler } from './middleware/problem-handler.ts';
+import { mailPage } from './middleware/mail-page.ts';
+import { metrics } from './middleware/metrics.ts';
 import { apiRouter } from './middleware/router.ts';
+import { openApiDocument, openApiPage } from './openapi/document.ts';
 import { sameSiteOnly } from './middleware/same-site.ts';
 import { jsonOnly } from './middleware/json-only.ts';
 import { ProblemError } from './problem.ts';
@@ -17,7 +21,7 @@ import { routes } from './routes/index.ts';
 
 const BODY_LIMIT = '1mb';
 
-export function createApp(context: AppContext): Express {
+export function createApp(context: AppContext, local_mail: LocalMail | null = null): Express {
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', context.config.trust_proxy ? 1 : false);
@@ -32,6 +36,8 @@ export function createApp(context: AppContext): Express {
       autoLogging: { ignore: (request) => request.url === '/api/v1/health/live' },
     }),
   );
+  const measured = metrics();
+  app.use(measured.count);
   app.use(securityHeaders());
   app.use(cookieParser());
   app.use(
@@ -40,6 +46,10 @@ export function createApp(context: AppContext): Express {
     jsonOnly(),
     express.json({ limit: BODY_LIMIT, strict: true }),
   );
+  app.get('/metrics', measured.page);
+  app.get('/api/v1/openapi.json', (_request, response) => void response.json(openApiDocument(routes)));
+  app.get('/api/v1/docs', (_request, response) => void response.type('html').send(openApiPage(routes)));
+  if (local_mail !== null) app.get('/mail', mailPage(local_mail));
   app.use('/api/v1', apiRouter(context, routes));
   app.use('/api', () => {
     throw new ProblemError('not_found', 'There is nothing at this address.');

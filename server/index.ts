@@ -26,7 +26,7 @@ const started = await startContext(config, () => address);
 const { context } = started;
 const server = createServer(
   { requestTimeout: 30_000, headersTimeout: 15_000, keepAliveTimeout: 10_000 },
-  createApp(context),
+  createApp(context, started.local_mail),
 );
 server.listen(config.port, '127.0.0.1', () => {
   const bound = server.address();

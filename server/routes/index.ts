@@ -1,4 +1,5 @@
 /** Every route of the API. What is not here is not answered. */
+import { documentRoutes } from './documents.ts';
 import { eventRoutes } from './events.ts';
 import { healthRoutes } from './health.ts';
 import { lotAndVoucherRoutes } from './lots-and-vouchers.ts';
@@ -22,4 +23,5 @@ export const routes: readonly Route[] = [
   ...lotAndVoucherRoutes,
   ...todayRoutes,
   ...reportRoutes,
+  ...documentRoutes,
 ];

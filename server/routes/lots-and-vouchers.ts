@@ -7,6 +7,7 @@ import { z } from '../../shared/schemas/zod.ts';
 import { ProblemError } from '../problem.ts';
 import { sendCsv } from '../presenters/send-csv.ts';
 import { checkQuery } from '../services/events/check-body.ts';
+import { lotLabel } from '../services/documents/lot-label.ts';
 import { lotList, lotWholeOf } from '../services/reads/lots.ts';
 import { search } from '../services/reads/search.ts';
 import { voucherList, voucherWholeOf } from '../services/reads/vouchers.ts';
@@ -18,6 +19,9 @@ export function pathId(value: string | undefined): string {
   if (!read.success) throw new ProblemError('not_found', 'There is nothing at this address.');
   return read.data;
 }
+
+const WORKSHOP = `SELECT name, (clock_timestamp() AT TIME ZONE time_zone)::date::text AS today FROM workshop
+  WHERE workshop_id = current_workshop()`;
 
 const searchQuery = z.strictObject({ q: z.string().trim().min(1).max(60) });
 
@@ -55,6 +59,21 @@ export const lotAndVoucherRoutes: readonly Route[] = [
     handle: async ({ context, who, params }) => ({
       body: await context.db.inScope(who, (tx) => lotWholeOf(tx, { id: pathId(params['id']) })),
     }),
+  },
+  {
+    method: 'get',
+    path: '/lots/:id/label',
+    allow: 'book.read',
+    summary: 'The label of a lot, as a PDF of 62 by 29 mm.',
+    async handle({ context, who, params, response }) {
+      const [lot, { name, today }] = await context.db.inScope(who, async (tx) => [
+        await lotWholeOf(tx, { id: pathId(params['id']) }),
+        await tx.one(z.object({ name: z.string(), today: z.string() }), WORKSHOP),
+      ]);
+      response.attachment(`${lot.code}.pdf`).type('application/pdf');
+      response.send(Buffer.from(await lotLabel(lot, name, today)));
+      return null;
+    },
   },
   {
     method: 'get',
