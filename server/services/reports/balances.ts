@@ -70,7 +70,7 @@ function balancesSql(by: BalancesBy, past: boolean): string {
       );
       return outer(
         `SELECT m.metal AS key, initcap(m.metal) AS name, NULL AS kind, ${part} AS part, ${columns.map((c) => c.replace(/\((sum.*)\)::bigint/, 'coalesce($1, 0)::bigint')).join(', ')}
-         ${from.replace('WHERE', `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', h.${m}_ug)`).join(', ')}) AS m(metal, ug) WHERE`)} GROUP BY m.metal, ${part}`,
+         ${from.replace('WHERE is_place', `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', h.${m}_ug)`).join(', ')}) AS m(metal, ug) WHERE is_place`)} GROUP BY m.metal, ${part}`,
       );
     }
   }

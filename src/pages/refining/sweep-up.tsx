@@ -125,9 +125,11 @@ export function SweepUpPage() {
 /** Common practice, no source; what the place's own rules say comes first. */
 function Cautions() {
   return (
-    <Notice severity="near" what="Dust and residues harm.">
-      Damp the floor before sweeping and wear a filter mask. Spent acids and baths keep their own marked
-      vessels and never go into a bin. The rules of your place on dust and chemicals come first.
-    </Notice>
+    <div className="mt-4">
+      <Notice severity="near" what="Dust and residues harm.">
+        Damp the floor before sweeping and wear a filter mask. Spent acids and baths keep their own marked
+        vessels and never go into a bin. The rules of your place on dust and chemicals come first.
+      </Notice>
+    </div>
   );
 }

@@ -76,7 +76,10 @@ export function LossesPage() {
       <Section
         heading="Gross loss by month"
         notes={
-          <p>All benches, {metalName(report.metal).toLowerCase()}. The net line needs a settled outturn.</p>
+          <p>
+            All benches, {metalName(report.metal).toLowerCase()}. What came back stands in the table, since an
+            outturn settles other months than its own.
+          </p>
         }
       >
         <MonthChart rows={months.rows} />
@@ -119,6 +122,14 @@ function Filters({ filter, set }: FiltersProps) {
 
 const drawn = (text: string | null): number | null => (text === null ? null : new Decimal(text).toNumber());
 
+/** What was allowed of a month's worked metal, in per cent; none where no allowance is set. */
+function allowedPercent({ allowance_g, worked_g }: Row): number | null {
+  const worked = new Decimal(worked_g);
+  return allowance_g === null || worked.isZero()
+    ? null
+    : new Decimal(allowance_g).times(100).div(worked).toNumber();
+}
+
 function MonthChart({ rows }: { readonly rows: readonly Row[] }) {
   if (rows.length === 0)
     return (
@@ -134,9 +145,7 @@ function MonthChart({ rows }: { readonly rows: readonly Row[] }) {
       labels={rows.map((row) => monthText(row.key))}
       lines={[
         { name: 'gross', tone: 'rouge', points: rows.map((row) => drawn(row.gross_percent)) },
-        ...(rows.some((row) => row.net_percent !== null)
-          ? [{ name: 'net', tone: 'verd', points: rows.map((row) => drawn(row.net_percent)) } as const]
-          : []),
+        { name: 'allowance', tone: 'ink', points: rows.map(allowedPercent) },
       ]}
     />
   );
