@@ -8,9 +8,12 @@ import type { Micrograms } from './micrograms.ts';
 import type { MassVector } from './vector.ts';
 import { METALS, ZERO_MASS, fineTotal, isPossibleMass, massVector, subtractMass } from './vector.ts';
 
-/** Finenesses are apportioned as whole ten-thousandths of a per mille, finer than any assay. */
-const PERMILLE_SCALE = new Decimal(10_000);
-const WHOLE = 10_000_000n;
+/**
+ * Finenesses are apportioned as whole parts of this many to the per mille: so fine that 22/24 of a tonne is right to
+ * the microgram, and within the 40 figures of a decimal.
+ */
+const PARTS_PER_PERMILLE = 10n ** 27n;
+const WHOLE = 1000n * PARTS_PER_PERMILLE;
 
 /**
  * Shares `total` by `weights`; the parts sum to it exactly.
@@ -37,7 +40,9 @@ export function apportion(total: bigint, weights: readonly bigint[]): bigint[] {
  * rest, so that precious metal never exceeds gross. Throws for an impossible fineness.
  */
 export function massFromFineness(gross: Micrograms, fineness: Fineness): MassVector {
-  const weights = METALS.map((metal) => BigInt(fineness[metal].times(PERMILLE_SCALE).toFixed(0)));
+  const scale = PARTS_PER_PERMILLE.toString();
+  // Rounded down, so that metals that make up the whole never come to more than it.
+  const weights = METALS.map((metal) => BigInt(fineness[metal].times(scale).toFixed(0, Decimal.ROUND_DOWN)));
   const rest = WHOLE - weights.reduce((all, weight) => all + weight, 0n);
   const [gold = 0n, silver = 0n, platinum = 0n, palladium = 0n] = apportion(gross, [...weights, rest]);
   return { gross, gold, silver, platinum, palladium };

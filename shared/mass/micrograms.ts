@@ -14,7 +14,7 @@ export const MAX_MASS_UG = 1_000_000_000_000n;
 export type ReadGrams =
   { readonly ok: true; readonly ug: Micrograms } | { readonly ok: false; readonly reason: string };
 
-const GRAMS = /^(-?)(0|[1-9]\d{0,6})(?:\.(\d{1,6}))?$/;
+const GRAMS = /^(-?)(0|[1-9]\d{0,14})(?:\.(\d{1,6}))?$/;
 
 /**
  * Reads grams such as "12.345": a point, at most six decimals, no blanks, no exponent, no thousands marks.
@@ -36,7 +36,7 @@ export function parseGrams(text: string, options: { readonly signed?: boolean } 
 
 /**
  * Prints micrograms as grams with `decimals` places, 0 to 6. Fewer than six are rounded half to even, for the eye
- * only: what is stored or exported always has six.
+ * only: what is stored or exported always has six. Throws for other places than 0 to 6.
  */
 export function printGrams(ug: Micrograms, decimals = 6): string {
   const unit = 10n ** BigInt(6 - decimals);
