@@ -23,7 +23,9 @@ export function csvTable(columns: readonly string[], rows: readonly (readonly (s
   const line = (cells: readonly string[]) => `${cells.join(',')}\r\n`;
   const figures = columns.map(isFigureColumn);
   const head = line(columns.map((column) => csvCell(column, false)));
-  return head + rows.map((row) => line(row.map((cell, index) => csvCell(cell, figures[index] === true)))).join('');
+  return (
+    head + rows.map((row) => line(row.map((cell, index) => csvCell(cell, figures[index] === true)))).join('')
+  );
 }
 
 /** The text of a cell as it was before it was written: one leading ' less. */
