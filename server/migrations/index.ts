@@ -8,6 +8,7 @@ import { postRecords } from './2026-12-01-05-post-records.ts';
 import { identity } from './2026-12-01-06-identity.ts';
 import { requestsAndQueue } from './2026-12-01-07-requests-and-queue.ts';
 import { readFacts } from './2026-12-01-08-read-facts.ts';
+import { balancesAtADay } from './2026-12-01-09-balances-at-a-day.ts';
 
 export const migrations: readonly Migration[] = [
   workshopsAndPersons,
@@ -18,4 +19,5 @@ export const migrations: readonly Migration[] = [
   identity,
   requestsAndQueue,
   readFacts,
+  balancesAtADay,
 ];

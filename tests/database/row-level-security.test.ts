@@ -82,7 +82,7 @@ describe('every table with a workshop', () => {
     expect(await all((table) => seen(table, ours.workshop_id, theirs.workshop_id))).toEqual(none());
   });
 
-  it('shows nothing to the owner of the tables either, but for the queue that serves all workshops', async () => {
+  it('shows nothing to the owner of the tables either, but for the queue that serves all workshops and their list', async () => {
     const rows = await asRole(db, 'owner', theirs.workshop_id, (sql) =>
       all(async (table) => {
         const [row] = await sql(`SELECT count(*)::text AS rows FROM ${table} WHERE workshop_id = $1`, [
@@ -91,7 +91,7 @@ describe('every table with a workshop', () => {
         return `${table}: ${String(row?.['rows'])}`;
       }),
     );
-    expect(rows.filter((row) => !row.endsWith(': 0'))).toEqual(['background_job: 1']);
+    expect(rows.filter((row) => !row.endsWith(': 0'))).toEqual(['background_job: 1', 'workshop: 1']);
   });
 
   it('takes no row for another workshop', async () => {

@@ -46,6 +46,7 @@ export async function workshopWithOneRowEach(db: TestDatabase): Promise<RawBook>
   ]);
   const person = [book.workshop_id, randomUUID(), book.keeper];
   await book.as('owner', async (sql) => {
+    await sql("SELECT * FROM balances_at('2026-05-01')");
     await sql('INSERT INTO handover VALUES ($1, $2, $4, $5, $3, $3)', [...person, received.id, book.safe]);
     await sql("INSERT INTO request_key VALUES ($1, 'key-' || $2::text, $3, repeat('a', 64))", person);
     await sql("INSERT INTO signature_request VALUES ($1, $2, 'reversal', '{}', '[]', 'why', $3)", person);

@@ -34,12 +34,11 @@ export async function readBalances(tx: Tx, by: BalancesBy, on: string | undefine
   return { on: date, currency, prices, rows: rows.map((row) => ({ ...row, value: worth(row) })), totals };
 }
 
-/** Holdings now, or the sums of entries up to a day. */
+/** Holdings now, or what the snapshots and sums by day say of a past one. */
 function balancesSql(by: BalancesBy, past: boolean): string {
   const sums = MASSES.map((m) => `sum(h.${m}_ug)::bigint AS ${m}_ug`).join(', ');
   const held = past
-    ? `SELECT e.workshop_id, e.account_id, e.lot_id, ${MASSES.map((m) => `sum(e.${m}_ug)::bigint AS ${m}_ug`).join(', ')}
-       FROM entry e WHERE e.workshop_id = current_workshop() AND e.business_date <= $1::date GROUP BY e.workshop_id, e.account_id, e.lot_id`
+    ? 'SELECT * FROM balances_at($1::date)'
     : `SELECT h.workshop_id, h.account_id, h.lot_id, ${MASSES.map((m) => `h.${m}_ug`).join(', ')} FROM holding h
        WHERE h.workshop_id = current_workshop() AND (h.gross_ug <> 0 OR h.gold_ug <> 0 OR h.silver_ug <> 0 OR h.platinum_ug <> 0 OR h.palladium_ug <> 0)`;
   const part = `CASE WHEN a.kind = 'metal_account' THEN 'claim' WHEN l.basis IN ('estimated', 'unknown') THEN 'estimated' ELSE 'weighed' END`;
