@@ -26,10 +26,10 @@ export function freePort() {
 
 /**
  * Starts the cluster that is remembered in `home`, or makes one there; it is stopped when the script ends.
- * A `throwAway` cluster lies in the temporary folder, does not wait for the disk, and is removed in the end.
+ * A `throwAway` cluster lies in the temporary folder and is removed in the end; it waits for the disk only if `durable`.
  * Gives `url(role, database)`, for the roles grainward_owner and grainward_app.
  */
-export async function startCluster({ bin, home, throwAway = false }) {
+export async function startCluster({ bin, home, throwAway = false, durable = !throwAway }) {
   mkdirSync(home, { recursive: true });
   const who = databaseUser();
   const memory = join(home, 'cluster.json');
@@ -62,7 +62,7 @@ export async function startCluster({ bin, home, throwAway = false }) {
   await clearLeftBehind(data);
   if ((await ctl(['status'])).code !== 0) {
     cluster.port = await freePort();
-    await startServer(ctl, cluster, throwAway);
+    await startServer(ctl, cluster, durable);
   }
   if (cluster.ready === false) await makeRoles(bin, cluster, plainEnv());
   cluster.ready = true;
@@ -75,14 +75,14 @@ export async function startCluster({ bin, home, throwAway = false }) {
 }
 
 /** Starts PostgreSQL; waits where the processes of a killed one are still leaving. */
-async function startServer(ctl, cluster, throwAway) {
+async function startServer(ctl, cluster, durable) {
   const log = join(cluster.dir, 'log');
   const settings = [
     '-c listen_addresses=127.0.0.1',
     `-c port=${cluster.port}`,
     '-c unix_socket_directories=',
     '-c max_connections=100',
-    ...(throwAway ? ['-c fsync=off', '-c synchronous_commit=off', '-c full_page_writes=off'] : []),
+    ...(durable ? [] : ['-c fsync=off', '-c synchronous_commit=off', '-c full_page_writes=off']),
   ].join(' ');
   let said = '';
   for (let tries = 0; tries < TRIES; tries += 1) {
