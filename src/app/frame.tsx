@@ -11,6 +11,7 @@ import { ToastProvider } from '../components/ui/toast.tsx';
 import { numberText } from '../lib/formats.ts';
 import { keys } from '../queries/keys.ts';
 import { useEnterWorkshop, useSession } from '../queries/session.ts';
+import { KeysHelp } from './keys-help.tsx';
 import { paths } from './paths.ts';
 import { ScanField } from './scan-field.tsx';
 import type { Tab } from './tabs.ts';
@@ -50,6 +51,7 @@ export function Frame() {
           <Outlet />
         </Suspense>
       </main>
+      <KeysHelp />
       <nav className="footbar" aria-label="Pages">
         {tabs.slice(0, 5).map((tab) => (
           <NavLink key={tab.to} to={tab.to} end={tab.to === paths.today}>
@@ -100,15 +102,14 @@ function Plate() {
       )}
       <span className="spring" />
       {session.can('book.read') ? <ScanField /> : null}
-      <NavLink
-        to={paths.account}
-        className="flex items-center gap-3 text-plate-ink no-underline"
-        aria-label={`${person.name}, ${person.role}: my account`}
-      >
-        <span className="initials">{initials(person.name)}</span>
+      <NavLink to={paths.account} className="person">
+        <span className="initials" aria-hidden="true">
+          {initials(person.name)}
+        </span>
         <span className="person-name">
           {person.name}, {person.role}
         </span>
+        <span className="sr-only">: my account</span>
       </NavLink>
     </div>
   );

@@ -14,7 +14,7 @@ import { signInRoutes } from '../pages/sign-in/routes.ts';
 import { signatureRoutes } from '../pages/signatures/routes.ts';
 import { todayRoutes } from '../pages/today/routes.ts';
 import { workshopRoutes } from '../pages/workshop/routes.ts';
-import { ErrorPage } from './error-page.tsx';
+import { ErrorPage, NotFound } from './error-page.tsx';
 import { Frame } from './frame.tsx';
 import { paths } from './paths.ts';
 
@@ -34,10 +34,12 @@ export function makeRouter(client: QueryClient) {
     ...signInRoutes,
     {
       element: <Frame />,
-      errorElement: <ErrorPage />,
+      errorElement: <ErrorPage alone />,
       hydrateFallbackElement: <p className="opening">Reading the book …</p>,
       loader: ({ request }) => guard(client, request),
-      children: [{ errorElement: <ErrorPage />, children: inside }],
+      children: [
+        { errorElement: <ErrorPage />, children: [...inside, { path: '*', element: <NotFound /> }] },
+      ],
     },
   ]);
 }
@@ -46,7 +48,7 @@ export function makeRouter(client: QueryClient) {
 async function guard(client: QueryClient, request: Request) {
   const { pathname, search } = new URL(request.url);
   try {
-    const session = await client.ensureQueryData(sessionQuery);
+    const session = await client.query({ ...sessionQuery, staleTime: 'static' });
     if (pathname === paths.today && session.person.role === 'goldsmith') return redirect(paths.myBench);
     return null;
   } catch (error) {

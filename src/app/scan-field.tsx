@@ -1,111 +1,168 @@
 /**
  * The scan field: a lot's code, a voucher's number, a name, or a page. "/" goes there from anywhere but a field; a
- * barcode scanner is a keyboard that ends with Enter.
+ * barcode scanner's burst is taken wherever the focus is.
  */
-import { useEffect, useRef, useState } from 'react';
+import { useCallback, useEffect, useId, useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
 import type { SearchHit } from '../../shared/schemas/search.ts';
 import { Icon } from '../components/ui/icon.tsx';
+import { useScannerBurst } from '../lib/scanner-burst.ts';
+import { useShortcut } from '../lib/shortcuts.ts';
 import { search } from '../queries/lots.ts';
+import { useSession } from '../queries/session.ts';
+import { pagesNamed } from './page-names.ts';
 import { paths } from './paths.ts';
 
 const WAIT_MS = 150;
 
-function target(hit: SearchHit): string {
+interface Found {
+  readonly to: string;
+  readonly label: string;
+  readonly words: string;
+}
+
+function foundOf(hit: SearchHit): Found {
+  const { label, words } = hit;
   switch (hit.what) {
     case 'lot':
-      return paths.lot(hit.id);
+      return { label, words, to: paths.lot(hit.id) };
     case 'voucher':
-      return paths.voucher(hit.id);
+      return { label, words, to: paths.voucher(hit.id) };
     case 'job':
-      return `${paths.vouchers}?job_id=${hit.id}`;
+      return { label, words, to: `${paths.vouchers}?job_id=${hit.id}` };
     case 'party':
-      return paths.workshopPart('parties');
+      return { label, words, to: paths.workshopPart('parties') };
   }
+}
+
+interface Finding {
+  /** What was looked for: an answer to an older text is never opened. */
+  readonly text: string;
+  readonly list: readonly Found[];
+}
+
+/** What the book and the pages have for a text; only pages where the line is broken. */
+async function find(text: string, may: readonly string[]): Promise<Finding> {
+  const pages = pagesNamed(text, may).map(({ name, to }) => ({ label: name, words: 'page', to }));
+  const hits = await search(text.trim()).catch(() => []);
+  return { text, list: [...pages, ...hits.map(foundOf)] };
 }
 
 export function ScanField() {
   const [text, setText] = useState('');
-  const [hits, setHits] = useState<readonly SearchHit[] | null>(null);
+  const [found, setFound] = useState<Finding | null>(null);
   const [chosen, setChosen] = useState(0);
   const input = useRef<HTMLInputElement>(null);
+  const list = useId();
   const navigate = useNavigate();
+  const { may } = useSession();
 
+  useShortcut(
+    '/',
+    useCallback(() => input.current?.focus(), []),
+  );
   useEffect(() => {
-    const onKey = (event: KeyboardEvent) => {
-      const inField = event.target instanceof HTMLElement && event.target.matches('input, textarea, select');
-      if (event.key !== '/' || inField) return;
-      event.preventDefault();
-      input.current?.focus();
-    };
-    window.addEventListener('keydown', onKey);
-    return () => window.removeEventListener('keydown', onKey);
-  }, []);
-  useEffect(() => {
-    const q = text.trim();
-    if (q === '') return undefined;
+    if (text.trim() === '') return undefined;
+    let stale = false;
     const timer = setTimeout(() => {
-      search(q)
-        .then((found) => {
-          setHits(found);
-          setChosen(0);
-        })
-        .catch(() => setHits(null));
+      void find(text, may).then((next) => {
+        if (stale) return;
+        setFound(next);
+        setChosen(0);
+      });
     }, WAIT_MS);
-    return () => clearTimeout(timer);
-  }, [text]);
+    return () => {
+      stale = true;
+      clearTimeout(timer);
+    };
+  }, [text, may]);
 
   const close = () => {
     setText('');
-    setHits(null);
+    setFound(null);
   };
-  const go = async (to: SearchHit | undefined) => {
-    const hit = to ?? (await search(text.trim()).catch(() => []))[0];
-    if (hit === undefined) return;
+  const open = (one: Found) => {
     close();
     input.current?.blur();
-    void navigate(target(hit));
+    void navigate(one.to);
+  };
+  const take = async (code: string) => {
+    const next = await find(code, may);
+    const [first] = next.list;
+    if (first !== undefined) open(first);
+    else {
+      setText(code);
+      setFound(next);
+      input.current?.focus();
+    }
+  };
+  useScannerBurst((code) => void take(code));
+  const onKeyDown = (key: string) => {
+    const last = (found?.list.length ?? 1) - 1;
+    const one = found?.text === text ? found.list[chosen] : undefined;
+    if (key === 'Enter' && one !== undefined) open(one);
+    else if (key === 'Enter' && text.trim() !== '') void take(text);
+    if (key === 'ArrowDown') setChosen((at) => Math.min(at + 1, last));
+    if (key === 'ArrowUp') setChosen((at) => Math.max(0, at - 1));
+    if (key === 'Escape') close();
   };
   return (
     <div className="scan on-dark">
       <Icon name="scan" size={20} />
       <input
         ref={input}
+        role="combobox"
         aria-label="Scan or type a lot"
+        aria-expanded={found !== null}
+        aria-controls={list}
+        aria-activedescendant={found?.list[chosen] === undefined ? undefined : `${list}-${chosen}`}
         placeholder="Scan or type a lot"
+        autoComplete="off"
         value={text}
         onChange={(event) => {
           setText(event.target.value);
-          if (event.target.value.trim() === '') setHits(null);
+          if (event.target.value.trim() === '') setFound(null);
         }}
-        onBlur={() => setTimeout(() => setHits(null), 200)}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') void go(hits?.[chosen]);
-          if (event.key === 'ArrowDown') setChosen((at) => Math.min(at + 1, (hits?.length ?? 1) - 1));
-          if (event.key === 'ArrowUp') setChosen((at) => Math.max(0, at - 1));
-          if (event.key === 'Escape') close();
-        }}
+        onBlur={() => setTimeout(() => setFound(null), 200)}
+        onKeyDown={(event) => onKeyDown(event.key)}
       />
       <kbd>/</kbd>
-      {hits === null ? null : (
-        <div className="scan-hits" role="listbox" aria-label="Found">
-          {hits.length === 0 ? <p className="none p-3">Nothing in the book has that code or name.</p> : null}
-          {hits.map((hit, index) => (
-            <a
-              key={`${hit.what}${hit.id}`}
-              href={target(hit)}
-              role="option"
-              aria-selected={index === chosen}
-              onClick={(event) => {
-                event.preventDefault();
-                void go(hit);
-              }}
-            >
-              <b>{hit.label}</b> {hit.words}
-            </a>
-          ))}
+      <FoundList id={list} found={found?.list ?? null} chosen={chosen} onOpen={open} />
+    </div>
+  );
+}
+
+interface FoundListProps {
+  readonly id: string;
+  readonly found: readonly Found[] | null;
+  readonly chosen: number;
+  readonly onOpen: (one: Found) => void;
+}
+
+function FoundList({ id, found, chosen, onOpen }: FoundListProps) {
+  return (
+    <div className="scan-hits" role="listbox" id={id} aria-label="Found" hidden={found === null}>
+      {found?.length === 0 ? (
+        <div className="none p-3" role="option" aria-selected="false">
+          Nothing in the book has that code or name. Look at the label again, or scan it.
         </div>
-      )}
+      ) : null}
+      {found?.map((one, index) => (
+        <a
+          key={one.to + one.label}
+          id={`${id}-${index}`}
+          href={one.to}
+          role="option"
+          tabIndex={-1}
+          aria-selected={index === chosen}
+          onClick={(event) => {
+            event.preventDefault();
+            onOpen(one);
+          }}
+        >
+          <b>{one.label}</b> {one.words}
+        </a>
+      ))}
     </div>
   );
 }

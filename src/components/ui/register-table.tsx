@@ -83,8 +83,7 @@ export function RegisterTable<Row extends object>(props: RegisterTableProps<Row>
       <div
         className="table-region"
         role="region"
-        aria-label={caption}
-        tabIndex={0}
+        aria-label={`Table: ${caption}`}
         ref={region}
         onKeyDown={onKeyDown}
       >
@@ -146,6 +145,7 @@ interface HeadProps<Row> {
 
 function Head<Row>({ column, direction, onSort }: HeadProps<Row>) {
   const order = direction === undefined ? undefined : direction.desc ? 'descending' : 'ascending';
+  if (column.head === '') return <td />;
   return (
     <th scope="col" className={cellClass({ ...column, figure: column.figure && 'plain' })} aria-sort={order}>
       {column.value === undefined ? (

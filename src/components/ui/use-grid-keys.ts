@@ -11,6 +11,10 @@ export function useGridKeys(region: RefObject<HTMLElement | null>) {
   // After every drawing: rows come, go and change places.
   useEffect(() => {
     const stops = stopsIn(region.current);
+    // A table that is wider than its room can be scrolled by keyboard too; any other is no stop of its own.
+    const { scrollWidth, clientWidth } = region.current ?? { scrollWidth: 0, clientWidth: 0 };
+    if (scrollWidth > clientWidth) region.current?.setAttribute('tabindex', '0');
+    else region.current?.removeAttribute('tabindex');
     const stay = stops.find((stop) => stop === document.activeElement) ?? stops[0];
     stops.forEach((stop) => {
       stop.tabIndex = stop === stay ? 0 : -1;

@@ -101,7 +101,7 @@ export function Family({ lot }: { readonly lot: LotWhole }) {
             );
           })}
           {boxes.map((box) => (
-            <Link key={box.id} to={`/lots/${box.id}`} aria-label={`${box.code}, ${box.description}`}>
+            <Link key={box.id} to={`/lots/${box.id}`} aria-label={`${box.code} ${box.description}`}>
               <rect
                 x={box.x}
                 y={box.y}

@@ -1,6 +1,6 @@
 /** An invented keeper's session and facts, as the server answers them. */
 export const SESSION = {
-  user: { id: 'u1', email: 'maud@ferrow-lisle.example', name: 'Maud Ilsley' },
+  user: { id: 'u1', email: 'maud@ferrow-lisle.example', name: 'Maud Ilsley', second_factor: false },
   person: { id: 'p1', name: 'Maud Ilsley', role: 'keeper', has_pin: true },
   workshop: {
     id: 'w1',
@@ -8,6 +8,7 @@ export const SESSION = {
     currency: 'EUR',
     time_zone: 'Europe/Dublin',
     mass_unit: 'g',
+    second_factor_roles: [],
   },
   workshops: [{ id: 'w1', name: 'Ferrow & Lisle', role: 'keeper' }],
   may: ['book.read', 'book.hold'],
