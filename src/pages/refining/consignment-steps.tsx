@@ -34,6 +34,7 @@ export function ConsignmentSteps({
         ug={melted.reduce((sum, grams) => sum + (grams === null ? 0n : gramsText(grams)), 0n)}
         what="bar"
         now={false}
+        otherwise={settled_on === null ? 'not yet' : 'not named'}
       />
       <StepItem name="Assayed" day={settled_on} ug={of('assayed_g', metal)} what={fine} now={false} />
       <StepItem
@@ -55,14 +56,16 @@ interface StepProps {
   readonly ug: bigint;
   readonly what: ReactNode;
   readonly now: boolean;
+  /** What is said where there is no day. */
+  readonly otherwise?: string;
 }
 
-function StepItem({ name, day, ug, what, now }: StepProps) {
+function StepItem({ name, day, ug, what, now, otherwise = 'not yet' }: StepProps) {
   return (
     <li className={day === null && !now ? 'ahead' : ''} aria-current={now ? 'step' : undefined}>
       <b>{name}</b>
       {day === null ? (
-        <span className="none">not yet</span>
+        <span className="none">{otherwise}</span>
       ) : (
         <>
           <span className="fig-label">{dayText(day)}</span>

@@ -200,7 +200,7 @@ function Against({ expected, assayed }: { readonly expected: bigint; readonly as
       {off > 0n ? '+' : ''}
       {ugFigure(off)}
       {percent === null ? null : (
-        <small className="ml-3 text-ink-2">{`${percent.replace('-', '\u2212')} %`}</small>
+        <small className="ml-3 text-ink-2">{`${off > 0n ? '+' : ''}${percent.replace('-', '\u2212')} %`}</small>
       )}
     </>
   );

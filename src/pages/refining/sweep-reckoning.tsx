@@ -3,10 +3,8 @@ import type { Facts } from '../../../shared/book/facts.ts';
 import { finenessOf, printPermille } from '../../../shared/alloy/fineness.ts';
 import { sweepEstimate } from '../../../shared/events/refining/sweep-up.ts';
 import { readTypedMass } from '../../../shared/mass/typed-mass.ts';
-import { printGrams } from '../../../shared/mass/micrograms.ts';
-import { fineTotal, sumMass } from '../../../shared/mass/vector.ts';
+import { sumMass } from '../../../shared/mass/vector.ts';
 import { Figure, LabelledFigure } from '../../components/ui/figure.tsx';
-import { IndexPlate } from '../../components/ui/index-plate.tsx';
 import { metalName } from '../../components/ui/metal-key.tsx';
 import { RegisterTable } from '../../components/ui/register-table.tsx';
 import { StatusWord } from '../../components/ui/status-word.tsx';
@@ -48,22 +46,12 @@ export function SweepReckoning({ facts, bin_id, weighing }: SweepReckoningProps)
             <Figure size={1} text={ugFigure(expected[chief])} unit="g" />
           </LabelledFigure>
           {net === null || rich === null ? null : (
-            <>
-              <LabelledFigure
-                label="Of the container’s net"
-                under={`${printPermille(rich[chief])} per thousand ${metalName(chief).toLowerCase()}`}
-              >
-                <Figure text={ugFigure(net)} unit="g gross" />
-              </LabelledFigure>
-              <div className="min-w-[280px] flex-1">
-                <IndexPlate
-                  value={Number.parseFloat(printGrams(fineTotal(expected)))}
-                  limit={Number.parseFloat(printGrams(net))}
-                  limitName="net of the container"
-                  finding={`Expected ${ugFigure(fineTotal(expected))} g fine in ${ugFigure(net)} g net`}
-                />
-              </div>
-            </>
+            <LabelledFigure
+              label="Of the container’s net"
+              under={`${printPermille(rich[chief])} per thousand ${metalName(chief).toLowerCase()}`}
+            >
+              <Figure text={ugFigure(net)} unit="g gross" />
+            </LabelledFigure>
           )}
         </div>
       )}

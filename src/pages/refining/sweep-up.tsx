@@ -49,7 +49,10 @@ export function SweepUpPage() {
     onPosted: posted,
   });
   const { values, set, errorOf } = form;
-  const facts = useFacts({ bin_ids: values.bin_id === '' ? [] : [values.bin_id] });
+  const facts = useFacts({
+    bin_ids: values.bin_id === '' ? [] : [values.bin_id],
+    account_ids: [values.bin_id, values.to_id].filter((id) => id !== ''),
+  });
   return (
     <>
       <Page
