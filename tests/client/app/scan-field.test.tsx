@@ -39,7 +39,7 @@ async function open(hits: Readonly<Record<string, readonly object[]>>) {
 
 const field = () => screen.getByRole('combobox', { name: 'Scan or type a lot' });
 const scan = (code: string, target: HTMLElement) => {
-  for (const key of [...code, 'Enter']) fireEvent.keyDown(target, { key });
+  for (const key of [...code.split(''), 'Enter']) fireEvent.keyDown(target, { key });
 };
 
 describe('typing', () => {
