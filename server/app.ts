@@ -15,7 +15,7 @@ import { metrics } from './middleware/metrics.ts';
 import { apiRouter } from './middleware/router.ts';
 import { openApiDocument, openApiPage } from './openapi/document.ts';
 import { sameSiteOnly } from './middleware/same-site.ts';
-import { jsonOnly } from './middleware/json-only.ts';
+import { jsonOnly, shallowOnly } from './middleware/json-only.ts';
 import { ProblemError } from './problem.ts';
 import { routes } from './routes/index.ts';
 
@@ -45,6 +45,7 @@ export function createApp(context: AppContext, local_mail: LocalMail | null = nu
     sameSiteOnly(() => context.publicUrl()),
     jsonOnly(),
     express.json({ limit: BODY_LIMIT, strict: true }),
+    shallowOnly(),
   );
   app.get('/metrics', measured.page);
   app.get('/api/v1/openapi.json', (_request, response) => void response.json(openApiDocument(routes)));
@@ -55,6 +56,9 @@ export function createApp(context: AppContext, local_mail: LocalMail | null = nu
     throw new ProblemError('not_found', 'There is nothing at this address.');
   });
   serveClient(app, resolve(context.config.client_dir));
+  app.use(() => {
+    throw new ProblemError('not_found', 'There is nothing at this address.');
+  });
   app.use(problemHandler(context.log));
   return app;
 }

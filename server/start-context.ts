@@ -1,5 +1,6 @@
 /** Puts together what the program runs on: database, mail, files, the stream of changes, the log. */
 import { pino } from 'pino';
+import type { Logger } from 'pino';
 import { fileStore } from './adapters/files/file-store.ts';
 import type { LocalMail } from './adapters/mail/local-mail.ts';
 import { startLocalMail } from './adapters/mail/local-mail.ts';
@@ -16,9 +17,15 @@ export interface Started {
   close(): Promise<void>;
 }
 
-/** Starts the parts; `publicUrl` is asked for when a link is written, since the port may be known only later. */
-export async function startContext(config: Config, publicUrl: () => string): Promise<Started> {
-  const log = pino({ level: config.log_level, redact: ['req.headers', 'password', 'pin', 'token'] });
+/**
+ * Starts the parts; `publicUrl` is asked for when a link is written, since the port may be known only later. The log
+ * goes to the standard output, or where a test wants to read it.
+ */
+export async function startContext(
+  config: Config,
+  publicUrl: () => string,
+  log: Logger = pino({ level: config.log_level, redact: ['req.headers', 'password', 'pin', 'token'] }),
+): Promise<Started> {
   const local_mail = config.smtp_url === null ? await startLocalMail() : null;
   const smtp_url = config.smtp_url ?? local_mail?.smtp_url ?? '';
   const context: AppContext = {

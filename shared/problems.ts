@@ -5,6 +5,8 @@
 export const PROBLEMS = {
   malformed: { status: 400, title: 'The request can’t be read' },
   not_signed_in: { status: 401, title: 'Not signed in' },
+  second_factor_needed: { status: 401, title: 'Second factor needed' },
+  second_factor_required: { status: 403, title: 'Second factor required' },
   not_permitted: { status: 403, title: 'Not permitted' },
   role_ended: { status: 403, title: 'Access ended' },
   wrong_pin: { status: 422, title: 'Wrong PIN' },
@@ -12,6 +14,7 @@ export const PROBLEMS = {
   not_found: { status: 404, title: 'Not found' },
   wrong_method: { status: 405, title: 'Wrong method' },
   conflict: { status: 409, title: 'Changed meanwhile' },
+  other_person: { status: 409, title: 'Opened as somebody else' },
   not_enough: { status: 409, title: 'Not enough metal' },
   too_large: { status: 413, title: 'Too large' },
   wrong_content_type: { status: 415, title: 'Wrong content type' },

@@ -1,4 +1,4 @@
-/** Bodies are JSON, but for uploads: anything else is refused before it is read. */
+/** Bodies are JSON, but for uploads: anything else is refused before it is read, and so is JSON in many layers. */
 import type { RequestHandler } from 'express';
 import { ProblemError } from '../problem.ts';
 
@@ -9,6 +9,27 @@ export function jsonOnly(): RequestHandler {
       request.get('transfer-encoding') !== undefined || (length !== undefined && length !== '0');
     if (hasBody && !request.is('application/json') && !request.is('multipart/form-data')) {
       throw new ProblemError('wrong_content_type', 'The request has to be JSON.');
+    }
+    next();
+  };
+}
+
+/** Deeper than any form of ours by far; what walks a body later may then do so by recursion. */
+const MOST_LAYERS = 20;
+
+/** Refuses a parsed body that is nested deeper than any of ours. */
+export function shallowOnly(): RequestHandler {
+  return (request, _response, next) => {
+    let layer: unknown[] = [request.body];
+    for (let depth = 0; layer.length > 0; depth += 1) {
+      if (depth > MOST_LAYERS)
+        throw new ProblemError(
+          'malformed',
+          'The request is nested deeper than anything that is asked for here.',
+        );
+      layer = layer.flatMap((value) =>
+        typeof value === 'object' && value !== null ? Object.values(value) : [],
+      );
     }
     next();
   };

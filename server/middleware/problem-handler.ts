@@ -25,7 +25,13 @@ export function problemHandler(log: Logger): ErrorRequestHandler {
     const error_id = errorId();
     const known = error instanceof ProblemError ? error : (parserProblem(error) ?? databaseProblem(error));
     const problem = known ?? new ProblemError('failed', ownFault(error_id));
-    const line = { error_id, code: problem.code, method: request.method, path: request.path };
+    const line = {
+      error_id,
+      code: problem.code,
+      method: request.method,
+      path: request.path,
+      request_id: String(request.id),
+    };
     if (known === null) log.error({ ...line, err: error }, 'a request failed');
     else log.info(line, 'a request was refused');
     sendProblem(response, problem, error_id);

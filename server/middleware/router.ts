@@ -8,6 +8,7 @@ import { may } from '../../shared/permissions.ts';
 import { z } from '../../shared/schemas/zod.ts';
 import type { AppContext } from '../context.ts';
 import { ProblemError } from '../problem.ts';
+import { securityEvent } from '../security-log.ts';
 import type { Route, SignedIn } from '../routes/route.ts';
 import { readAccessToken } from '../services/identity/access-token.ts';
 import { whoIs } from '../services/identity/sessions.ts';
@@ -36,7 +37,7 @@ export function apiRouter(context: AppContext, routes: readonly Route[]): Router
       const answer =
         route.allow === 'public'
           ? await route.handle({ ...call, who })
-          : await route.handle({ ...call, who: permitted(context, route, who) });
+          : await route.handle({ ...call, who: permitted(context, request, route, who) });
       if (answer === null) return;
       if (answer.body === undefined) response.status(answer.status ?? 204).end();
       else response.status(answer.status ?? 200).json(answer.body);
@@ -44,7 +45,8 @@ export function apiRouter(context: AppContext, routes: readonly Route[]): Router
     methods.set(route.path, new Set([...(methods.get(route.path) ?? []), route.method]));
   }
   for (const [path, known] of methods) {
-    router.all(path, () => {
+    router.all(path, (_request, response) => {
+      response.setHeader('Allow', [...known].join(', ').toUpperCase());
       throw new ProblemError('wrong_method', `Here only ${[...known].join(', ')} is answered.`);
     });
   }
@@ -55,8 +57,7 @@ async function signedIn(context: AppContext, request: Request, needed: boolean):
   const { access } = readCookies(request, isSecure(context));
   const token = access === null ? null : readAccessToken(context.config.jwt_secret, access);
   if (token === null) {
-    if (access !== null && needed)
-      context.log.warn({ event: 'token_refused', address: request.ip }, 'a token was refused');
+    if (access !== null && needed) securityEvent({ context, request, who: null }, 'token_refused');
     return null;
   }
   return needed ? whoIs(context.db, token.session_id, token.user_id) : whoIsOrNull(context, token);
@@ -75,17 +76,32 @@ async function whoIsOrNull(
   }
 }
 
+/**
+ * Whether who asks may. A page names the person that it was opened as: where another tab has signed somebody else in,
+ * or has gone into another workshop, nothing is read or written as the wrong one.
+ */
 function permitted(
   context: AppContext,
+  request: Request,
   route: Exclude<Route, { allow: 'public' }>,
   who: SignedIn | null,
 ): SignedIn {
   if (who === null) throw new ProblemError('not_signed_in', 'Sign in first. What you typed is kept.');
-  if (!may(who.role, route.allow)) {
-    context.log.warn(
-      { event: 'not_permitted', action: route.allow, person_id: who.person_id, workshop_id: who.workshop_id },
-      'an action was refused',
+  const opened_as = request.get('x-grainward-person');
+  if (opened_as !== undefined && opened_as !== who.person_id) {
+    throw new ProblemError(
+      'other_person',
+      'This page was opened as somebody else, or in another workshop. Nothing was posted; load the page again.',
     );
+  }
+  if (who.second_factor_missing && route.allow !== 'session.read') {
+    throw new ProblemError(
+      'second_factor_required',
+      `This workshop asks every ${who.role} for a second factor. Set yours up under “My account”.`,
+    );
+  }
+  if (!may(who.role, route.allow)) {
+    securityEvent({ context, request, who }, 'not_permitted', { action: route.allow, role: who.role });
     throw new ProblemError(
       'not_permitted',
       `That is not among what a ${who.role} does here. Ask the proprietor.`,

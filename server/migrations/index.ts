@@ -9,6 +9,7 @@ import { identity } from './2026-12-01-06-identity.ts';
 import { requestsAndQueue } from './2026-12-01-07-requests-and-queue.ts';
 import { readFacts } from './2026-12-01-08-read-facts.ts';
 import { balancesAtADay } from './2026-12-01-09-balances-at-a-day.ts';
+import { secondFactor } from './2026-12-01-10-second-factor.ts';
 
 export const migrations: readonly Migration[] = [
   workshopsAndPersons,
@@ -20,4 +21,5 @@ export const migrations: readonly Migration[] = [
   requestsAndQueue,
   readFacts,
   balancesAtADay,
+  secondFactor,
 ];

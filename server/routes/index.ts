@@ -1,5 +1,7 @@
 /** Every route of the API. What is not here is not answered. */
 import { documentRoutes } from './documents.ts';
+import { dossierRoutes } from './dossiers.ts';
+import { bookCheckRoutes } from './book-check.ts';
 import { eventRoutes } from './events.ts';
 import { healthRoutes } from './health.ts';
 import { lotAndVoucherRoutes } from './lots-and-vouchers.ts';
@@ -8,6 +10,7 @@ import { peopleRoutes } from './people.ts';
 import { registerRoutes } from './registers.ts';
 import { reportRoutes } from './reports.ts';
 import type { Route } from './route.ts';
+import { secondFactorRoutes } from './second-factor.ts';
 import { sessionRoutes } from './session.ts';
 import { signatureRoutes } from './signatures.ts';
 import { todayRoutes } from './today.ts';
@@ -15,6 +18,7 @@ import { todayRoutes } from './today.ts';
 export const routes: readonly Route[] = [
   ...healthRoutes,
   ...sessionRoutes,
+  ...secondFactorRoutes,
   ...peopleRoutes,
   ...eventRoutes,
   ...signatureRoutes,
@@ -23,5 +27,7 @@ export const routes: readonly Route[] = [
   ...lotAndVoucherRoutes,
   ...todayRoutes,
   ...reportRoutes,
+  ...bookCheckRoutes,
   ...documentRoutes,
+  ...dossierRoutes,
 ];

@@ -10,6 +10,7 @@ import {
   setPinBody,
   signUpBody,
 } from '../../shared/schemas/identity.ts';
+import { securityEvent } from '../security-log.ts';
 import { checkBody } from '../services/events/check-body.ts';
 import {
   acceptInvitation,
@@ -21,7 +22,8 @@ import { askForReset, changePassword, completeReset } from '../services/identity
 import { setPin } from '../services/identity/pins.ts';
 import { changeRole, endRole } from '../services/identity/roles.ts';
 import { members } from '../services/identity/session-info.ts';
-import { signUp } from '../services/identity/sign-up.ts';
+import { holdSignUps, signUp } from '../services/identity/sign-up.ts';
+import { pathId } from './lots-and-vouchers.ts';
 import type { Answer, Route } from './route.ts';
 import { beginAndGive } from './session.ts';
 
@@ -34,7 +36,10 @@ export const peopleRoutes: readonly Route[] = [
     allow: 'public',
     summary: 'Signs up a workshop; who does it is its proprietor.',
     async handle(call) {
-      const made = await signUp(call.context, checkBody(signUpBody, call.body));
+      const body = checkBody(signUpBody, call.body);
+      await holdSignUps(call.context, call.request.ip ?? '');
+      const made = await signUp(call.context, body);
+      securityEvent({ ...call, who: made }, 'workshop_opened');
       await beginAndGive(call, made);
       return { status: 201, body: { workshop_id: made.workshop_id } };
     },
@@ -51,9 +56,11 @@ export const peopleRoutes: readonly Route[] = [
     path: '/invitations',
     allow: 'people.invite',
     summary: 'Invites somebody by e-mail.',
-    async handle({ context, who, body }) {
-      const input = checkBody(invitationBody, body);
-      return { status: 201, body: await context.db.inScope(who, (tx) => invite(context, tx, input, who)) };
+    async handle(call) {
+      const { context, who } = call;
+      const made = await invite(context, checkBody(invitationBody, call.body), who);
+      securityEvent(call, 'invited', { invitation: made.id });
+      return { status: 201, body: made };
     },
   },
   {
@@ -74,10 +81,10 @@ export const peopleRoutes: readonly Route[] = [
     allow: 'public',
     summary: 'Takes an invitation.',
     async handle(call) {
-      await beginAndGive(
-        call,
-        await acceptInvitation(call.context, checkBody(acceptInvitationBody, call.body)),
-      );
+      const body = checkBody(acceptInvitationBody, call.body);
+      const joined = await acceptInvitation(call.context, body, call.request.ip ?? '');
+      securityEvent({ ...call, who: joined }, 'invitation_taken');
+      await beginAndGive(call, joined);
       return DONE;
     },
   },
@@ -86,9 +93,12 @@ export const peopleRoutes: readonly Route[] = [
     path: '/people/:id/role',
     allow: 'people.end',
     summary: 'Gives somebody another role or end date.',
-    async handle({ context, who, params, body }) {
-      const to = checkBody(roleBody, body);
-      await context.db.inScope(who, (tx) => changeRole(tx, params['id'] ?? '', to, who));
+    async handle(call) {
+      const { context, who } = call;
+      const person_id = pathId(call.params['id']);
+      const to = checkBody(roleBody, call.body);
+      await context.db.inScope(who, (tx) => changeRole(tx, person_id, to, who));
+      securityEvent(call, 'role_given', { to_person_id: person_id, role: to.role });
       return DONE;
     },
   },
@@ -97,8 +107,11 @@ export const peopleRoutes: readonly Route[] = [
     path: '/people/:id/role',
     allow: 'people.end',
     summary: 'Ends somebody’s role at once.',
-    async handle({ context, who, params }) {
-      await context.db.inScope(who, (tx) => endRole(tx, params['id'] ?? '', who));
+    async handle(call) {
+      const { context, who } = call;
+      const person_id = pathId(call.params['id']);
+      await context.db.inScope(who, (tx) => endRole(tx, person_id, who));
+      securityEvent(call, 'role_ended', { to_person_id: person_id });
       return DONE;
     },
   },
@@ -107,8 +120,9 @@ export const peopleRoutes: readonly Route[] = [
     path: '/password-resets',
     allow: 'public',
     summary: 'Asks for a link to set a new password.',
-    async handle({ context, body }) {
-      await askForReset(context, checkBody(resetBody, body).email);
+    async handle(call) {
+      await askForReset(call.context, checkBody(resetBody, call.body).email, call.request.ip ?? '');
+      securityEvent(call, 'reset_asked');
       return { status: 202, body: {} };
     },
   },
@@ -117,8 +131,9 @@ export const peopleRoutes: readonly Route[] = [
     path: '/password-resets/complete',
     allow: 'public',
     summary: 'Sets a new password by a link.',
-    async handle({ context, body }) {
-      await completeReset(context, checkBody(completeResetBody, body));
+    async handle(call) {
+      const whose = await completeReset(call.context, checkBody(completeResetBody, call.body));
+      securityEvent({ ...call, who: whose }, 'password_changed');
       return DONE;
     },
   },
@@ -127,8 +142,9 @@ export const peopleRoutes: readonly Route[] = [
     path: '/session/password',
     allow: 'session.read',
     summary: 'Changes one’s own password.',
-    async handle({ context, who, body }) {
-      await changePassword(context, who, checkBody(changePasswordBody, body));
+    async handle(call) {
+      await changePassword(call.context, call.who, checkBody(changePasswordBody, call.body));
+      securityEvent(call, 'password_changed');
       return DONE;
     },
   },
@@ -137,8 +153,9 @@ export const peopleRoutes: readonly Route[] = [
     path: '/session/pin',
     allow: 'session.read',
     summary: 'Sets one’s own handover PIN.',
-    async handle({ context, who, body }) {
-      await setPin(context, who, checkBody(setPinBody, body));
+    async handle(call) {
+      await setPin(call.context, call.who, checkBody(setPinBody, call.body));
+      securityEvent(call, 'pin_set');
       return DONE;
     },
   },

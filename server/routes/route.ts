@@ -11,6 +11,8 @@ import type { PersonInWorkshop } from '../services/events/person.ts';
 export interface SignedIn extends PersonInWorkshop {
   readonly user_id: string;
   readonly session_id: string;
+  /** The workshop asks this role for a second factor, and it is not set up yet. */
+  readonly second_factor_missing: boolean;
 }
 
 export interface Call<Who> {

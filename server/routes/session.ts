@@ -4,13 +4,17 @@ import type { AppContext } from '../context.ts';
 import { clearCookies, readCookies, setCookies } from '../middleware/cookies.ts';
 import { isSecure } from '../middleware/router.ts';
 import { ProblemError } from '../problem.ts';
+import { securityEvent } from '../security-log.ts';
 import { checkBody } from '../services/events/check-body.ts';
-import { signAccessToken } from '../services/identity/access-token.ts';
+import { readAccessToken, signAccessToken } from '../services/identity/access-token.ts';
 import { sessionInfo } from '../services/identity/session-info.ts';
 import type { NewSession } from '../services/identity/sessions.ts';
-import { beginSession, endSession, enterWorkshop, refreshSession } from '../services/identity/sessions.ts';
+import { beginSession, endSessionOf, enterWorkshop, refreshSession } from '../services/identity/sessions.ts';
 import { signIn } from '../services/identity/sign-in.ts';
+import { hashSecret } from '../services/identity/tokens.ts';
 import type { Call, Route, SignedIn } from './route.ts';
+
+const NOBODY = { workshop_id: null, user_id: null };
 
 /** Gives the browser a session that has begun. */
 export function giveSession(
@@ -42,8 +46,14 @@ export const sessionRoutes: readonly Route[] = [
     async handle(call) {
       const body = checkBody(signInBody, call.body);
       const address = call.request.ip ?? '';
-      const session = await signIn(call.context, { ...body, address });
-      call.context.log.info({ event: 'signed_in', user_id: session.user_id, address }, 'signed in');
+      const session = await signIn(call.context, { ...body, address }).catch((error: unknown) => {
+        securityEvent(call, 'sign_in_refused', {
+          account: hashSecret(body.email).slice(0, 16),
+          code: error instanceof ProblemError ? error.code : 'failed',
+        });
+        throw error;
+      });
+      securityEvent({ ...call, who: session }, 'signed_in');
       giveSession(call, session);
       return { status: 204, body: undefined };
     },
@@ -60,9 +70,19 @@ export const sessionRoutes: readonly Route[] = [
     path: '/session',
     allow: 'public',
     summary: 'Signs out.',
-    async handle({ context, who, response }) {
-      if (who !== null) await context.db.inScope(who, (tx) => endSession(tx, who.session_id));
-      clearCookies(response, isSecure(context));
+    async handle(call) {
+      const { context, request, response } = call;
+      const secure = isSecure(context);
+      const { access, refresh } = readCookies(request, secure);
+      const ended = await context.db.inScope(NOBODY, (tx) =>
+        endSessionOf(
+          tx,
+          refresh,
+          access === null ? null : readAccessToken(context.config.jwt_secret, access),
+        ),
+      );
+      if (ended !== null) securityEvent({ ...call, who: ended }, 'signed_out');
+      clearCookies(response, secure);
       return { status: 204, body: undefined };
     },
   },
@@ -71,11 +91,13 @@ export const sessionRoutes: readonly Route[] = [
     path: '/session/refresh',
     allow: 'public',
     summary: 'Gives a new access token for the refresh token.',
-    async handle({ context, request, response }) {
+    async handle(call) {
+      const { context, request, response } = call;
       const secure = isSecure(context);
       const { refresh } = readCookies(request, secure);
       const next = refresh === null ? null : await refreshed(context, refresh);
       if (next === null) {
+        if (refresh !== null) securityEvent(call, 'refresh_refused');
         clearCookies(response, secure);
         throw new ProblemError(
           'not_signed_in',
@@ -92,15 +114,17 @@ export const sessionRoutes: readonly Route[] = [
     path: '/session/workshop',
     allow: 'session.read',
     summary: 'Goes into another workshop in which one has a role.',
-    async handle({ context, who, body }) {
-      const { workshop_id } = checkBody(enterWorkshopBody, body);
+    async handle(call) {
+      const { context, who } = call;
+      const { workshop_id } = checkBody(enterWorkshopBody, call.body);
       await context.db.inScope({ workshop_id: null, user_id: who.user_id }, (tx) =>
         enterWorkshop(tx, who.session_id, who.user_id, workshop_id),
       );
+      securityEvent(call, 'workshop_entered', { entered: workshop_id });
       return { status: 204, body: undefined };
     },
   },
 ];
 
 const refreshed = (context: AppContext, token: string) =>
-  context.db.inScope({ workshop_id: null, user_id: null }, (tx) => refreshSession(tx, token));
+  context.db.inScope(NOBODY, (tx) => refreshSession(tx, token));

@@ -1,5 +1,6 @@
 /** The queue of acts that wait for a second signature. */
 import { refuseSignatureBody } from '../../shared/schemas/signature-request.ts';
+import { securityEvent } from '../security-log.ts';
 import { checkBody } from '../services/events/check-body.ts';
 import {
   approveSignature,
@@ -34,14 +35,12 @@ export const signatureRoutes: readonly Route[] = [
     path: '/signature-requests/:id/approve',
     allow: 'signature.give',
     summary: 'Signs a request of somebody else; it is posted then.',
-    async handle({ context, who, params }) {
+    async handle(call) {
+      const { context, who, params } = call;
       const answer = await context.db.inScope(who, (tx) => approveSignature(tx, params['id'] ?? '', who));
       const last = answer.records.at(-1);
       if (last !== undefined) context.stream.changed(who.workshop_id, last.sequence);
-      context.log.info(
-        { event: 'signature_given', person_id: who.person_id, workshop_id: who.workshop_id },
-        'signed',
-      );
+      securityEvent(call, 'signature_given', { request: params['id'] ?? '' });
       return { status: 201, body: answer };
     },
   },
@@ -50,9 +49,11 @@ export const signatureRoutes: readonly Route[] = [
     path: '/signature-requests/:id/refuse',
     allow: 'signature.give',
     summary: 'Refuses a request of somebody else.',
-    async handle({ context, who, params, body }) {
-      const { note } = checkBody(refuseSignatureBody, body);
+    async handle(call) {
+      const { context, who, params } = call;
+      const { note } = checkBody(refuseSignatureBody, call.body);
       await context.db.inScope(who, (tx) => refuseSignature(tx, params['id'] ?? '', who, note));
+      securityEvent(call, 'signature_refused', { request: params['id'] ?? '' });
       return { status: 204, body: undefined };
     },
   },

@@ -32,7 +32,11 @@ export const signUpBody = z.strictObject({
 });
 export type SignUpBody = z.output<typeof signUpBody>;
 
-export const signInBody = z.strictObject({ email, password });
+/** Six figures of the authenticator, or one of the recovery codes. */
+const code = z.string('Enter the code.').trim().min(1, 'Enter the code.').max(40, 'That is no code.');
+
+/** The code is asked for where the account has a second factor. */
+export const signInBody = z.strictObject({ email, password, code: code.nullable().default(null) });
 
 export const invitationBody = z.strictObject({
   email,
@@ -52,7 +56,12 @@ export const invitationInfo = z.object({
   /** Whether there is an account of that address: then its password is asked for, else a new one is set. */
   has_account: z.boolean(),
 });
-export const acceptInvitationBody = z.strictObject({ token: secret, password });
+/** The code is asked for where the address has an account with a second factor. */
+export const acceptInvitationBody = z.strictObject({
+  token: secret,
+  password,
+  code: code.nullable().default(null),
+});
 
 export const resetBody = z.strictObject({ email });
 export const completeResetBody = z.strictObject({ token: secret, password });
@@ -61,11 +70,19 @@ export const setPinBody = z.strictObject({
   password,
   pin: z.string().regex(/^\d{4,8}$/, 'A PIN is four to eight figures.'),
 });
+export const beginSecondFactorBody = z.strictObject({ password });
+/** What an authenticator is told: by the picture, or typed. `setup` goes back with the first code, within ten minutes. */
+export const secondFactorSetup = z.object({ setup: z.string(), secret: z.string(), qr: z.string() });
+export const turnOnSecondFactorBody = z.strictObject({ setup: z.string().min(20).max(1000), code });
+export const provenByCodeBody = z.strictObject({ password, code });
+/** Shown once; each signs in once in place of the authenticator. */
+export const recoveryCodes = z.object({ recovery_codes: z.array(z.string()) });
+export const secondFactorRolesBody = z.strictObject({ roles: z.array(z.enum(ROLES)).max(ROLES.length) });
 export const enterWorkshopBody = z.strictObject({ workshop_id: id });
 export const roleBody = z.strictObject({ role: z.enum(ROLES), until: businessDate.nullable().default(null) });
 
 export const sessionJson = z.object({
-  user: z.object({ id: z.string(), email: z.string(), name: z.string() }),
+  user: z.object({ id: z.string(), email: z.string(), name: z.string(), second_factor: z.boolean() }),
   person: z.object({ id: z.string(), name: z.string(), role: z.enum(ROLES), has_pin: z.boolean() }),
   workshop: z.object({
     id: z.string(),
@@ -73,6 +90,8 @@ export const sessionJson = z.object({
     currency: z.string(),
     time_zone: z.string(),
     mass_unit: z.string(),
+    /** Roles that may do nothing here before they have a second factor. */
+    second_factor_roles: z.array(z.enum(ROLES)),
   }),
   workshops: z.array(z.object({ id: z.string(), name: z.string(), role: z.enum(ROLES) })),
   may: z.array(z.string()),

@@ -2,8 +2,10 @@
 import type { z } from 'zod';
 import { ProblemError } from '../../problem.ts';
 
-/** The checked input. Throws ProblemError `invalid` with one sentence per field. */
+/** The checked input. Throws ProblemError `malformed` for what is no object, `invalid` with one sentence per field. */
 export function checkBody<T>(schema: z.ZodType<T>, body: unknown): T {
+  if (typeof body !== 'object' || body === null || Array.isArray(body))
+    throw new ProblemError('malformed', 'The request has to carry a JSON object.');
   const read = schema.safeParse(body);
   if (read.success) return read.data;
   const errors = read.error.issues.map((issue) => ({

@@ -8,8 +8,9 @@ import type { Tx } from '../../db/rows.ts';
 import { ProblemError } from '../../problem.ts';
 import { postRecords } from '../book/post.ts';
 import type { PersonInWorkshop } from '../events/person.ts';
-import { checkPassword, hashPassword, isPassword } from './passwords.ts';
+import { checkPassword, hashPassword } from './passwords.ts';
 import { giveRole, workshopToday } from './roles.ts';
+import { proveAccount } from './sign-in.ts';
 import { addUser, linkPerson } from './sign-up.ts';
 import { hashSecret, newSecret } from './tokens.ts';
 
@@ -18,7 +19,6 @@ const DAYS_OPEN = 7;
 /** Invites somebody; the e-mail goes out after the transaction. Refuses an auditor without an end date. */
 export async function invite(
   context: AppContext,
-  tx: Tx,
   body: InvitationBody,
   by: PersonInWorkshop,
 ): Promise<{ id: string }> {
@@ -28,15 +28,10 @@ export async function invite(
   }
   const id = randomUUID();
   const token = newSecret();
-  await tx.run(
-    `INSERT INTO invitation (workshop_id, id, email, name, role, until, token_hash, invited_by, expires_at)
-      VALUES (current_workshop(), $1::uuid, $2, $3, $4, $5::date, $6, $7::uuid, now() + interval '${DAYS_OPEN} days')`,
-    [id, body.email, body.name, body.role, body.until, hashSecret(token), by.person_id],
-  );
-  const { name } = await tx.one(
-    z.object({ name: z.string() }),
-    'SELECT name FROM workshop WHERE workshop_id = current_workshop()',
-  );
+  const { name } = await context.db.inScope({ workshop_id: by.workshop_id, user_id: null }, async (tx) => {
+    await tx.run(INVITE, [id, body.email, body.name, body.role, body.until, hashSecret(token), by.person_id]);
+    return tx.one(WORKSHOP_NAME.row, WORKSHOP_NAME.sql);
+  });
   await context.mail.send({
     to: body.email,
     subject: `${name} invites you to its book of metal, as ${body.role}`,
@@ -48,6 +43,13 @@ export async function invite(
   });
   return { id };
 }
+
+const INVITE = `INSERT INTO invitation (workshop_id, id, email, name, role, until, token_hash, invited_by, expires_at)
+  VALUES (current_workshop(), $1::uuid, $2, $3, $4, $5::date, $6, $7::uuid, now() + interval '${DAYS_OPEN} days')`;
+const WORKSHOP_NAME = {
+  row: z.object({ name: z.string() }),
+  sql: 'SELECT name FROM workshop WHERE workshop_id = current_workshop()',
+};
 
 const invitation = z.object({
   workshop_id: z.string(),
@@ -71,8 +73,8 @@ export async function invitationByToken(context: AppContext, token: string) {
     if (found === null)
       throw new ProblemError('not_found', 'This invitation was used or has run out. Ask for a new one.');
     const account = await tx.maybe(
-      z.object({ id: z.string(), password_hash: z.string() }),
-      'SELECT id::text, password_hash FROM user_account WHERE email = $1',
+      z.object({ id: z.string() }),
+      'SELECT id::text FROM user_account WHERE email = $1',
       [found.email],
     );
     return { ...found, account };
@@ -80,53 +82,57 @@ export async function invitationByToken(context: AppContext, token: string) {
 }
 
 /** The name of the workshop that invites. */
-export function workshopName(context: AppContext, workshop_id: string): Promise<string> {
-  return context.db.inScope({ workshop_id, user_id: null }, async (tx) => {
-    const row = await tx.one(
-      z.object({ name: z.string() }),
-      'SELECT name FROM workshop WHERE workshop_id = current_workshop()',
-    );
-    return row.name;
-  });
+export async function workshopName(context: AppContext, workshop_id: string): Promise<string> {
+  const { name } = await context.db.inScope({ workshop_id, user_id: null }, (tx) =>
+    tx.one(WORKSHOP_NAME.row, WORKSHOP_NAME.sql),
+  );
+  return name;
 }
 
 /**
- * Takes an invitation: a new account with the password given, or, where the address has an account, that account's
- * own password. Gives whom to sign in, and where.
+ * Takes an invitation: a new account with the password given, or, where the address has an account, by that account's
+ * own password and second factor. Gives whom to sign in, and where.
  */
-export async function acceptInvitation(context: AppContext, body: { token: string; password: string }) {
+export async function acceptInvitation(
+  context: AppContext,
+  body: { token: string; password: string; code: string | null },
+  address: string,
+): Promise<{ user_id: string; workshop_id: string }> {
   const found = await invitationByToken(context, body.token);
-  const user_id = found.account?.id ?? randomUUID();
-  if (found.account === null) checkPassword(body.password, [found.name, found.email.split('@')[0] ?? '']);
-  else if (!(await isPassword(body.password, found.account.password_hash))) {
-    throw new ProblemError(
-      'not_signed_in',
-      'That is not the password of this address. Try again, or have it reset.',
-    );
+  const { workshop_id, email, name } = found;
+  if (found.account !== null) {
+    const user_id = await proveAccount(context, { email, password: body.password, code: body.code, address });
+    await context.db.inScope({ workshop_id, user_id }, (tx) => takeInvitation(tx, found, user_id));
+    return { user_id, workshop_id };
   }
-  const password_hash =
-    found.account === null ? await hashPassword(body.password, context.config.bcrypt_cost) : null;
-  await context.db.inScope({ workshop_id: found.workshop_id, user_id }, async (tx) => {
-    const taken = await tx.maybe(
-      z.object({ invited_by: z.string() }),
-      `UPDATE invitation SET used_at = now() WHERE workshop_id = current_workshop() AND id = $1::uuid AND used_at IS NULL
-        RETURNING invited_by::text`,
-      [found.id],
-    );
-    if (taken === null)
-      throw new ProblemError('not_found', 'This invitation was used or has run out. Ask for a new one.');
-    if (password_hash !== null)
-      await addUser(tx, { id: user_id, email: found.email, name: found.name, password_hash });
-    const before = await tx.maybe(
-      z.object({ id: z.string() }),
-      'SELECT id::text FROM person WHERE workshop_id = current_workshop() AND user_id = $1::uuid',
-      [user_id],
-    );
-    const person_id = before?.id ?? randomUUID();
-    const { name, role, until } = found;
-    const draft = giveRole({ person_id, name, role, until }, await workshopToday(tx));
-    await postRecords(tx, [draft], { person_id: taken.invited_by, approved_by: null });
-    await linkPerson(tx, person_id, user_id);
+  checkPassword(body.password, [name, email.split('@')[0] ?? '', await workshopName(context, workshop_id)]);
+  const password_hash = await hashPassword(body.password, context.config.bcrypt_cost);
+  const user_id = randomUUID();
+  await context.db.inScope({ workshop_id, user_id }, async (tx) => {
+    await addUser(tx, { id: user_id, email, name, password_hash });
+    await takeInvitation(tx, found, user_id);
   });
-  return { user_id, workshop_id: found.workshop_id };
+  return { user_id, workshop_id };
+}
+
+/** Uses the link up and gives the role, to the person that the account was here before, or to a new one. */
+async function takeInvitation(tx: Tx, found: z.output<typeof invitation>, user_id: string): Promise<void> {
+  const taken = await tx.maybe(
+    z.object({ invited_by: z.string() }),
+    `UPDATE invitation SET used_at = now() WHERE workshop_id = current_workshop() AND id = $1::uuid AND used_at IS NULL
+      RETURNING invited_by::text`,
+    [found.id],
+  );
+  if (taken === null)
+    throw new ProblemError('not_found', 'This invitation was used or has run out. Ask for a new one.');
+  const before = await tx.maybe(
+    z.object({ id: z.string() }),
+    'SELECT id::text FROM person WHERE workshop_id = current_workshop() AND user_id = $1::uuid',
+    [user_id],
+  );
+  const person_id = before?.id ?? randomUUID();
+  const { name, role, until } = found;
+  const draft = giveRole({ person_id, name, role, until }, await workshopToday(tx));
+  await postRecords(tx, [draft], { person_id: taken.invited_by, approved_by: null });
+  await linkPerson(tx, person_id, user_id);
 }

@@ -16,6 +16,8 @@ const row = z.object({
   currency: z.string(),
   time_zone: z.string(),
   mass_unit: z.string(),
+  second_factor: z.boolean(),
+  second_factor_roles: z.array(z.enum(ROLES)),
   today: z.string(),
   sequence: z.string(),
   balanced: z.boolean(),
@@ -31,7 +33,7 @@ export function sessionInfo(context: AppContext, who: SignedIn): Promise<Session
       [who.user_id],
     );
     return {
-      user: { id: me.user_id, email: me.email, name: me.user_name },
+      user: { id: me.user_id, email: me.email, name: me.user_name, second_factor: me.second_factor },
       person: { id: who.person_id, name: me.person_name, role: who.role, has_pin: me.has_pin },
       workshop: {
         id: who.workshop_id,
@@ -39,6 +41,7 @@ export function sessionInfo(context: AppContext, who: SignedIn): Promise<Session
         currency: me.currency,
         time_zone: me.time_zone,
         mass_unit: me.mass_unit,
+        second_factor_roles: me.second_factor_roles,
       },
       workshops,
       may: Object.keys(PERMISSIONS).filter((action) => may(who.role, actionOf(action))),
@@ -67,7 +70,7 @@ export function members(context: AppContext, who: SignedIn): Promise<MemberJson[
 }
 
 const ME = `SELECT u.id::text AS user_id, u.email, u.name AS user_name, p.name AS person_name, p.pin_hash IS NOT NULL AS has_pin,
-    w.name AS workshop_name, w.currency, w.time_zone, w.mass_unit,
+    w.name AS workshop_name, w.currency, w.time_zone, w.mass_unit, u.totp_secret IS NOT NULL AS second_factor, w.second_factor_roles,
     (clock_timestamp() AT TIME ZONE w.time_zone)::date::text AS today, h.sequence::text,
     (SELECT coalesce(sum(gross_ug), 0) = 0 AND coalesce(sum(gold_ug), 0) = 0 AND coalesce(sum(silver_ug), 0) = 0
        AND coalesce(sum(platinum_ug), 0) = 0 AND coalesce(sum(palladium_ug), 0) = 0

@@ -62,8 +62,21 @@ export async function refreshSession(
   return { session_id, user_id, refresh_token: next };
 }
 
-export const endSession = (tx: Tx, session_id: string): Promise<void> =>
+const endSession = (tx: Tx, session_id: string): Promise<void> =>
   tx.run('UPDATE session SET ended_at = now() WHERE id = $1::uuid AND ended_at IS NULL', [session_id]);
+
+/** Ends the session that a browser's cookies name, by either of them; gives whose it was, or null where none lives. */
+export const endSessionOf = (
+  tx: Tx,
+  refresh_token: string | null,
+  access: { readonly session_id: string } | null,
+): Promise<{ user_id: string } | null> =>
+  tx.maybe(
+    z.object({ user_id: z.string() }),
+    `UPDATE session SET ended_at = now() WHERE ended_at IS NULL AND (id = $1::uuid OR refresh_hash = $2 OR previous_hash = $2)
+      RETURNING user_id::text`,
+    [access?.session_id ?? null, refresh_token === null ? '' : hashSecret(refresh_token)],
+  );
 
 /** Ends every session of a user, but for one that may go on. */
 export const endSessionsOf = (tx: Tx, user_id: string, but: string | null): Promise<void> =>
@@ -77,6 +90,7 @@ const signedIn = z.object({
   person_id: z.string().nullable(),
   role: z.enum(ROLES).nullable(),
   role_ended: z.boolean().nullable(),
+  second_factor_missing: z.boolean().nullable(),
 });
 
 /**
@@ -86,7 +100,7 @@ const signedIn = z.object({
 export async function whoIs(db: Database, session_id: string, user_id: string): Promise<SignedIn | null> {
   const [row] = await db.once(
     signedIn,
-    'SELECT workshop_id::text, person_id::text, role, role_ended FROM who_is($1::uuid, $2::uuid)',
+    'SELECT workshop_id::text, person_id::text, role, role_ended, second_factor_missing FROM who_is($1::uuid, $2::uuid)',
     [session_id, user_id],
   );
   if (row === undefined || row.workshop_id === null || row.person_id === null || row.role === null)
@@ -97,7 +111,14 @@ export async function whoIs(db: Database, session_id: string, user_id: string): 
       'Your access to this workshop has ended. Ask the proprietor to renew it.',
     );
   }
-  return { user_id, session_id, workshop_id: row.workshop_id, person_id: row.person_id, role: row.role };
+  return {
+    user_id,
+    session_id,
+    workshop_id: row.workshop_id,
+    person_id: row.person_id,
+    role: row.role,
+    second_factor_missing: row.second_factor_missing === true,
+  };
 }
 
 /** Puts a session into another workshop in which its user has a role. Throws `not_found` for any other. */

@@ -7,6 +7,7 @@ import type { Tx } from '../../db/rows.ts';
 import { ProblemError } from '../../problem.ts';
 import { postRecords } from '../book/post.ts';
 import { openStartingAccounts } from '../workshop/starting-accounts.ts';
+import { pressBrake } from './brake.ts';
 import { checkPassword, hashPassword } from './passwords.ts';
 import { giveRole } from './roles.ts';
 
@@ -42,6 +43,15 @@ export async function signUp(
   });
   return ids;
 }
+
+/** Workshops that one address may open in a row. */
+const FREE_SIGN_UPS = 200;
+
+/** Holds back an address that opens workshops without end. Throws `too_many`. */
+export const holdSignUps = (context: Pick<AppContext, 'db'>, address: string): Promise<void> =>
+  context.db.inScope({ workshop_id: null, user_id: null }, (tx) =>
+    pressBrake(tx, `sign-ups from ${address}`, FREE_SIGN_UPS),
+  );
 
 export interface NewUser {
   readonly id: string;
