@@ -37,7 +37,7 @@ async function posting(): Promise<void> {
   const transactions = await capturedTransactions(shops);
   const issues = shops.map((shop) => issueRequest(shop));
   say(
-    `One issue is ${transactions[0]?.length ?? 0} statements. ${CLIENTS} clients, ${ROUNDS} rounds of ${SECONDS} s each:`,
+    `One issue is ${transactions[0]?.filter((line) => !line.startsWith('\\set')).length ?? 0} statements. ${CLIENTS} clients, ${ROUNDS} rounds of ${SECONDS} s each:`,
   );
   await httpRate(program.port, issues, CLIENTS, SECONDS);
   const rounds: { http: number; sql: number }[] = [];
