@@ -7,6 +7,9 @@ import { setTimeout as pause } from 'node:timers/promises';
 import { createApp } from './app.ts';
 import { reasonsAgainst } from './check-database.ts';
 import { readConfig } from './config.ts';
+import { workOf } from './jobs/kinds.ts';
+import type { Worker } from './jobs/worker.ts';
+import { startWorker } from './jobs/worker.ts';
 import { startContext } from './start-context.ts';
 
 const RETRY_MS = 2_000;
@@ -49,7 +52,9 @@ process.on('unhandledRejection', (error) => {
   process.exit(1);
 });
 
+let worker: Worker | null = null;
 await whenReachable();
+worker = startWorker(context.db, workOf(context), context.log);
 
 async function whenReachable(): Promise<void> {
   for (;;) {
@@ -71,6 +76,7 @@ async function end(): Promise<void> {
   setTimeout(() => process.exit(1), LAST_ANSWERS_MS).unref();
   server.close();
   server.closeIdleConnections();
+  await worker?.stop();
   await started.close();
   process.exit(0);
 }

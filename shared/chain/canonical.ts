@@ -3,7 +3,8 @@
  * normalised (NFC, no NUL, no lone surrogates) before they are written, so that they read back the same.
  */
 
-export type CanonicalValue = string | null | readonly CanonicalValue[] | { readonly [key: string]: CanonicalValue };
+export type CanonicalValue =
+  string | null | readonly CanonicalValue[] | { readonly [key: string]: CanonicalValue };
 
 /** Text as it is hashed and stored: NFC. Throws for NUL and for lone surrogates, which no store keeps. */
 export function normaliseText(text: string): string {

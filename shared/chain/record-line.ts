@@ -19,7 +19,10 @@ const chainEntry = z.strictObject({
   line: z.string().regex(/^[1-9]\d*$/),
   lot_id: z.string(),
   palladium_g: gramsOfSix,
-  pieces: z.string().regex(/^-?\d+$/).nullable(),
+  pieces: z
+    .string()
+    .regex(/^-?\d+$/)
+    .nullable(),
   platinum_g: gramsOfSix,
   silver_g: gramsOfSix,
 });
@@ -78,7 +81,12 @@ function members(value: { readonly [key: string]: CanonicalValue }): string {
 }
 
 /** The line, as the database's `post_records` puts it together. */
-export function assembleLine(parts: LineParts, previous_hash: string, recorded_at: string, sequence: bigint): string {
+export function assembleLine(
+  parts: LineParts,
+  previous_hash: string,
+  recorded_at: string,
+  sequence: bigint,
+): string {
   return `${parts.head}"previous_hash":"${previous_hash}","recorded_at":"${recorded_at}",${parts.middle}"sequence":"${sequence}"}`;
 }
 

@@ -26,8 +26,11 @@ function signedRightly(record: ChainRecord, people: ReadonlyMap<string, PersonSt
   const findings: Finding[] = [];
   if (!first && (recorder === undefined || !recorder.active))
     findings.push({ at, sentence: `Record ${at} was recorded by somebody who had no role here then.` });
-  if (!first && recorder?.role === 'auditor')
-    findings.push({ at, sentence: `Record ${at} was recorded by an auditor, who writes nothing.` });
+  if (!first && recorder?.role === 'auditor' && record.kind !== 'dossier_made')
+    findings.push({
+      at,
+      sentence: `Record ${at} was recorded by an auditor, who writes nothing but that a dossier was made.`,
+    });
   if (record.approved_by === null) {
     const settled = leafOf(record, 'single_handed') === 'yes';
     if (TWO_SIGNATURES.includes(record.kind) && !settled)
