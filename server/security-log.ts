@@ -35,6 +35,10 @@ interface Who {
   readonly workshop_id?: string;
 }
 
+/** The id that the request has in the log. */
+export const requestId = (request: Request): string | null =>
+  typeof request.id === 'string' ? request.id : null;
+
 /** Tells the log. `more` holds ids and words of closed lists only. */
 export function securityEvent(
   call: { readonly context: AppContext; readonly request: Request; readonly who: Who | null },
@@ -48,7 +52,7 @@ export function securityEvent(
     person_id: who?.person_id ?? null,
     workshop_id: who?.workshop_id ?? null,
     address: request.ip ?? null,
-    request_id: String(request.id),
+    request_id: requestId(request),
     ...more,
   };
   if (REFUSALS.has(event)) context.log.warn(line, event);

@@ -8,6 +8,7 @@ import type { Logger } from 'pino';
 import { PROBLEMS } from '../../shared/problems.ts';
 import { databaseProblem } from '../db/database-problem.ts';
 import { ProblemError } from '../problem.ts';
+import { requestId } from '../security-log.ts';
 import { parserProblem } from './parser-problem.ts';
 
 /** An id that can be read out over the telephone: "7F3K-20Q1". */
@@ -30,7 +31,7 @@ export function problemHandler(log: Logger): ErrorRequestHandler {
       code: problem.code,
       method: request.method,
       path: request.path,
-      request_id: String(request.id),
+      request_id: requestId(request),
     };
     if (known === null) log.error({ ...line, err: error }, 'a request failed');
     else log.info(line, 'a request was refused');
