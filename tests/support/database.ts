@@ -64,10 +64,21 @@ export async function createTestDatabase(): Promise<TestDatabase> {
     async drop() {
       const last = new pg.Client({ connectionString: cluster.href });
       await last.connect();
-      await last.query(`DROP DATABASE IF EXISTS "${name}" WITH (FORCE)`);
+      await drop(last, name);
       await last.end();
     },
   };
+}
+
+/** A connection that was closed a moment ago may still be leaving, and of the program's role the owner may not end it. */
+async function drop(admin: pg.Client, name: string, tries = 50): Promise<void> {
+  try {
+    await admin.query(`DROP DATABASE IF EXISTS "${name}" WITH (FORCE)`);
+  } catch (error) {
+    if (tries === 0) throw error;
+    await new Promise((resolve) => setTimeout(resolve, 100));
+    await drop(admin, name, tries - 1);
+  }
 }
 
 /** The template carries the state of the migrations in its name, so that an old one is never copied. */
