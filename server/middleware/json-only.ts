@@ -46,9 +46,7 @@ export function shallowOnly(): RequestHandler {
           'malformed',
           'The request is nested deeper than anything that is asked for here.',
         );
-      layer = layer.flatMap((value) =>
-        typeof value === 'object' && value !== null ? Object.values(value) : [],
-      );
+      layer = layer.flatMap(within);
     }
     next();
   };

@@ -5,6 +5,7 @@ import { may } from '../../shared/permissions.ts';
 import { metalRequestBody } from '../../shared/schemas/metal-request.ts';
 import { checkBody } from '../services/events/check-body.ts';
 import { askForMetal, endRequest, waitingRequests } from '../services/requests/metal-requests.ts';
+import { pathId } from './lots-and-vouchers.ts';
 import type { Route } from './route.ts';
 
 const answerBody = z.strictObject({ voucher_id: id });
@@ -37,7 +38,7 @@ export const metalRequestRoutes: readonly Route[] = [
     summary: 'Marks a request as answered by a voucher.',
     async handle({ context, who, params, body }) {
       const { voucher_id } = checkBody(answerBody, body);
-      await context.db.inScope(who, (tx) => endRequest(tx, params['id'] ?? '', 'answered', { voucher_id }));
+      await context.db.inScope(who, (tx) => endRequest(tx, pathId(params['id']), 'answered', { voucher_id }));
       return { status: 204, body: undefined };
     },
   },
@@ -47,7 +48,7 @@ export const metalRequestRoutes: readonly Route[] = [
     allow: 'request.answer',
     summary: 'Declines a request.',
     async handle({ context, who, params }) {
-      await context.db.inScope(who, (tx) => endRequest(tx, params['id'] ?? '', 'declined', {}));
+      await context.db.inScope(who, (tx) => endRequest(tx, pathId(params['id']), 'declined', {}));
       return { status: 204, body: undefined };
     },
   },
@@ -58,7 +59,7 @@ export const metalRequestRoutes: readonly Route[] = [
     summary: 'Takes one’s own request back.',
     async handle({ context, who, params }) {
       await context.db.inScope(who, (tx) =>
-        endRequest(tx, params['id'] ?? '', 'withdrawn', { only_of: who.person_id }),
+        endRequest(tx, pathId(params['id']), 'withdrawn', { only_of: who.person_id }),
       );
       return { status: 204, body: undefined };
     },

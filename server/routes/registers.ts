@@ -15,6 +15,7 @@ import {
   readPrices,
   readSettingRows,
 } from '../services/reads/registers.ts';
+import { pathId } from './lots-and-vouchers.ts';
 import type { Route } from './route.ts';
 
 const register = (path: string, summary: string, read: (tx: Tx) => Promise<unknown[]>): Route => ({
@@ -52,7 +53,7 @@ export const registerRoutes: readonly Route[] = [
           z.object({ id: z.string() }),
           `UPDATE party SET email = $2, phone = $3, address = $4 WHERE workshop_id = current_workshop() AND id = $1::uuid
             RETURNING id::text`,
-          [params['id'] ?? '', contact.email, contact.phone, contact.address],
+          [pathId(params['id']), contact.email, contact.phone, contact.address],
         ),
       );
       if (done === null)

@@ -9,6 +9,7 @@ import {
   waitingSignatures,
   withdrawSignature,
 } from '../services/signatures/signature-requests.ts';
+import { pathId } from './lots-and-vouchers.ts';
 import type { Route } from './route.ts';
 
 export const signatureRoutes: readonly Route[] = [
@@ -27,7 +28,7 @@ export const signatureRoutes: readonly Route[] = [
     allow: 'book.read',
     summary: 'One request, with what would be posted.',
     handle: async ({ context, who, params }) => ({
-      body: await context.db.inScope(who, (tx) => signatureRequestById(tx, params['id'] ?? '')),
+      body: await context.db.inScope(who, (tx) => signatureRequestById(tx, pathId(params['id']))),
     }),
   },
   {
@@ -37,7 +38,7 @@ export const signatureRoutes: readonly Route[] = [
     summary: 'Signs a request of somebody else; it is posted then.',
     async handle(call) {
       const { context, who, params } = call;
-      const answer = await context.db.inScope(who, (tx) => approveSignature(tx, params['id'] ?? '', who));
+      const answer = await context.db.inScope(who, (tx) => approveSignature(tx, pathId(params['id']), who));
       const last = answer.records.at(-1);
       if (last !== undefined) context.stream.changed(who.workshop_id, last.sequence);
       securityEvent(call, 'signature_given', { request: params['id'] ?? '' });
@@ -52,7 +53,7 @@ export const signatureRoutes: readonly Route[] = [
     async handle(call) {
       const { context, who, params } = call;
       const { note } = checkBody(refuseSignatureBody, call.body);
-      await context.db.inScope(who, (tx) => refuseSignature(tx, params['id'] ?? '', who, note));
+      await context.db.inScope(who, (tx) => refuseSignature(tx, pathId(params['id']), who, note));
       securityEvent(call, 'signature_refused', { request: params['id'] ?? '' });
       return { status: 204, body: undefined };
     },
@@ -63,7 +64,7 @@ export const signatureRoutes: readonly Route[] = [
     allow: 'signature.give',
     summary: 'Takes one’s own request back.',
     async handle({ context, who, params }) {
-      await context.db.inScope(who, (tx) => withdrawSignature(tx, params['id'] ?? '', who));
+      await context.db.inScope(who, (tx) => withdrawSignature(tx, pathId(params['id']), who));
       return { status: 204, body: undefined };
     },
   },
