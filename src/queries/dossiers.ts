@@ -12,7 +12,7 @@ const dossier = z.object({
   done_parts: z.number().nullable(),
   all_parts: z.number().nullable(),
   made_at: z.string().nullable(),
-  file: z.object({ document_id: z.string(), bytes: z.coerce.string(), sha256: z.string() }).nullable(),
+  file: z.object({ document_id: z.string(), bytes: z.string(), sha256: z.string() }).nullable(),
 });
 export type Dossier = z.output<typeof dossier>;
 
@@ -23,7 +23,7 @@ const dossiers = z.object({
 });
 
 /** Whether it is still being put together. */
-export const isInHand = ({ file, state }: Dossier): boolean => file === null && state !== 'failed';
+export const isInHand = ({ state }: Dossier): boolean => state === 'queued' || state === 'running';
 
 const ASKED_AGAIN_MS = 1_500;
 

@@ -1,6 +1,6 @@
 /** The audit export: a dossier of the whole book, put together in the background, that is checked without Grainward. */
 import { useState } from 'react';
-import { Button } from '../../components/ui/button.tsx';
+import { Button, LinkButton } from '../../components/ui/button.tsx';
 import { Notice } from '../../components/ui/notice.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
 import { RegisterTable } from '../../components/ui/register-table.tsx';
@@ -10,6 +10,7 @@ import { figureText, momentText, numberText } from '../../lib/formats.ts';
 import type { Dossier } from '../../queries/dossiers.ts';
 import { isInHand, useDossiers, useMakeDossier } from '../../queries/dossiers.ts';
 import { useSession } from '../../queries/session.ts';
+import { paths } from '../../app/paths.ts';
 import { CONTENTS } from './contents.ts';
 import { DossierProgress } from './dossier-progress.tsx';
 
@@ -21,7 +22,14 @@ export function AuditExportPage() {
       title="Audit export"
       lede="for the insurer, the whole book as it stands"
       margin={<p>Insurance & audit</p>}
-      actions={<Make busy={inHand.length > 0} />}
+      actions={
+        <>
+          <LinkButton to={paths.verify} icon="check">
+            Check a dossier
+          </LinkButton>
+          <Make busy={inHand.length > 0} />
+        </>
+      }
       first={inHand.map((dossier) => (
         <DossierProgress key={dossier.id} dossier={dossier} />
       ))}

@@ -7,4 +7,5 @@ export const insuranceRoutes: RouteObject[] = [
     path: paths.insurance,
     lazy: async () => ({ Component: (await import('./audit-export.tsx')).AuditExportPage }),
   },
+  { path: paths.verify, lazy: async () => ({ Component: (await import('./verify.tsx')).VerifyPage }) },
 ];
