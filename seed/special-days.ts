@@ -1,9 +1,13 @@
 /** The days that are not like others: consignments and their outturn, a customer's own metal, a reversal, a dispute. */
 import type { Faker } from '@faker-js/faker';
+import { gramsText } from '../shared/mass/grams-text.ts';
+import { printGrams, roundHalfEven } from '../shared/mass/micrograms.ts';
 import { z } from '../shared/schemas/zod.ts';
 import { milligrams, openJob } from './bench-day.ts';
 import type { Recorder } from './recorder.ts';
 import type { Stock } from './stock.ts';
+
+const UG_PER_MG = 1_000n;
 
 /** Drums go to the refiner with the courier and arrive. Gives the consignment's voucher. */
 export async function sendSweeps(book: Recorder, code: string, drums: readonly string[]): Promise<string> {
@@ -39,24 +43,25 @@ export async function settleSweeps(
   drums: readonly string[],
 ): Promise<void> {
   const held = await holdings(book, 'refiner', drums);
-  const credit = { gold: 0, silver: 0, palladium: 0 };
+  const credit = { gold: 0n, silver: 0n, palladium: 0n };
   const lines = held.map((row) => {
     const metals = (['gold', 'silver', 'palladium'] as const).map((metal) => {
-      const expected = Math.round(Number.parseFloat(row[`${metal}_g`]) * 1000);
-      const assayed = Math.round(expected * dice.number.float({ min: 0.93, max: 1.06 }));
-      const credited = Math.floor(assayed * (metal === 'gold' ? 0.985 : 0.95));
+      const found = BigInt(dice.number.int({ min: 930, max: 1060 }));
+      const assayed = roundHalfEven((gramsText(row[`${metal}_g`]) * found) / 1000n, UG_PER_MG) * UG_PER_MG;
+      const payable = (assayed * (metal === 'gold' ? 985n : 950n)) / 1000n;
+      const credited = payable - (payable % UG_PER_MG);
       credit[metal] += credited;
-      return { metal, assayed_g: milligrams(assayed), credited_g: milligrams(credited) };
+      return { metal, assayed_g: printGrams(assayed), credited_g: printGrams(credited) };
     });
     return { lot_id: row.lot_id, settle: { how: 'all' }, metals };
   });
   const payments = (['gold', 'silver', 'palladium'] as const)
-    .filter((metal) => credit[metal] > 0)
+    .filter((metal) => credit[metal] > 0n)
     .map((metal) => ({
       way: 'metal_account',
       account_id: book.id('With Osterlode'),
       metal,
-      mass_g: milligrams(credit[metal]),
+      mass_g: printGrams(credit[metal]),
     }));
   const charges = [
     { what: 'Melting, two drums', amount: '96.00' },

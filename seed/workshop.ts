@@ -24,10 +24,11 @@ import { Stock } from './stock.ts';
 const SEED = 4180;
 const WEEKS = 26;
 
-/** Makes the workshop; `today` is the day that it ends on. Gives its id. */
+/** Makes the workshop; `today` is the day that it ends on, `tell` hears of each month. Gives the workshop's id. */
 export async function playWorkshop(
   context: { readonly db: Database; readonly config: Config },
   today: string,
+  tell: (month: string) => void = () => undefined,
 ): Promise<string> {
   const dice = new Faker({ locale: en, seed: SEED });
   const days = workingDays(today, WEEKS);
@@ -41,11 +42,17 @@ export async function playWorkshop(
   await nameAccounts(book);
   await firstDay(book);
   await nameAccounts(book);
-  await playDays(book, dice, days, stock);
+  await playDays(book, dice, days, stock, tell);
   return workshop_id;
 }
 
-async function playDays(book: Recorder, dice: Faker, days: readonly string[], stock: Stock): Promise<void> {
+async function playDays(
+  book: Recorder,
+  dice: Faker,
+  days: readonly string[],
+  stock: Stock,
+  tell: (month: string) => void,
+): Promise<void> {
   let month = -1;
   let made: Made[] = [];
   const drums: string[] = [];
@@ -55,6 +62,7 @@ async function playDays(book: Recorder, dice: Faker, days: readonly string[], st
     book.day = day;
     if (isFirstOfMonth(days, index)) {
       month += 1;
+      tell(day.slice(0, 7));
       await setPrices(book, dice, month);
       await supplierDelivery(book, dice, stock);
     }

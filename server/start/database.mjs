@@ -9,7 +9,10 @@ import { postgresPrograms } from './packages.mjs';
 import { run } from './run.mjs';
 import { begin, done, giveUp } from './say.mjs';
 
-/** Gives the addresses {owner, app} of a database, for the owner of its tables and for the role that the program runs as. */
+/**
+ * Gives the addresses {owner, app} of a database, for the owner of its tables and for the role that the program runs as;
+ * of a cluster of our own also `remake`, which empties it.
+ */
 export async function database({ root, home, throwAway = false, name = 'grainward' }) {
   const { DATABASE_URL: app, DATABASE_OWNER_URL: owner } = process.env;
   if (app && owner) return throwAway ? { app: at(app, name), owner: at(owner, name) } : { app, owner };
@@ -20,7 +23,8 @@ export async function database({ root, home, throwAway = false, name = 'grainwar
   begin(step);
   const cluster = await startCluster({ bin: await postgresPrograms(), home, throwAway });
   done(step, `port ${cluster.port}`);
-  return { owner: cluster.url('grainward_owner', name), app: cluster.url('grainward_app', name) };
+  const roles = { owner: cluster.url('grainward_owner', name), app: cluster.url('grainward_app', name) };
+  return { ...roles, remake: cluster.remake };
 }
 
 async function prepared(root, home, name) {

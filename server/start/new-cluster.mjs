@@ -73,30 +73,24 @@ export async function initialise(bin, cluster, who) {
 }
 
 /** The owner of the tables, and the role that the program runs as: it owns nothing and passes over nothing. */
-export async function makeRoles(bin, cluster, env) {
-  const { passwords, port } = cluster;
-  const input = `
-    CREATE ROLE grainward_owner LOGIN CREATEDB NOSUPERUSER NOBYPASSRLS PASSWORD '${passwords.grainward_owner}';
-    CREATE ROLE grainward_app LOGIN NOSUPERUSER NOCREATEDB NOCREATEROLE NOBYPASSRLS PASSWORD '${passwords.grainward_app}';
-    CREATE DATABASE grainward OWNER grainward_owner;
-  `;
-  const { code, output } = await run(
-    join(bin, 'psql'),
-    [
-      '-h',
-      '127.0.0.1',
-      '-p',
-      String(port),
-      '-U',
-      'postgres',
-      '-d',
-      'postgres',
-      '-v',
-      'ON_ERROR_STOP=1',
-      '-q',
-    ],
-    { env: { ...env, PGPASSWORD: passwords.postgres }, cwd: '/', quiet: true, input },
-  );
-  if (code !== 0)
-    giveUp(`the roles of the database could not be made.\n${output.replaceAll(/PASSWORD '\w+'/g, '')}`);
+export function makeRoles(bin, cluster, env) {
+  const { passwords } = cluster;
+  const statements = [
+    `CREATE ROLE grainward_owner LOGIN CREATEDB NOSUPERUSER NOBYPASSRLS PASSWORD '${passwords.grainward_owner}';`,
+    `CREATE ROLE grainward_app LOGIN NOSUPERUSER NOCREATEDB NOCREATEROLE NOBYPASSRLS PASSWORD '${passwords.grainward_app}';`,
+    'CREATE DATABASE grainward OWNER grainward_owner;',
+  ];
+  return psql(bin, cluster, env, statements.join('\n'));
+}
+
+/** Runs statements as the cluster's superuser, each by itself. */
+export async function psql(bin, { passwords, port }, env, input) {
+  const server = ['-h', '127.0.0.1', '-p', String(port), '-U', 'postgres', '-d', 'postgres'];
+  const { code, output } = await run(join(bin, 'psql'), [...server, '-v', 'ON_ERROR_STOP=1', '-q'], {
+    env: { ...env, PGPASSWORD: passwords.postgres },
+    cwd: '/',
+    quiet: true,
+    input,
+  });
+  if (code !== 0) giveUp(`the database could not be set up.\n${output.replaceAll(/PASSWORD '\w+'/g, '')}`);
 }

@@ -27,7 +27,8 @@ async function main() {
   mkdirSync(home, { recursive: true });
   onlyOne();
   await npmPackages(root);
-  const { app, owner } = await database({ root, home });
+  const { app, owner, remake } = await database({ root, home });
+  await withoutHalfADemo(remake);
   const env = {
     ...process.env,
     ...secrets(home),
@@ -38,10 +39,22 @@ async function main() {
   delete env.DATABASE_OWNER_URL;
   const asOwner = { ...env, DATABASE_OWNER_URL: owner };
   await step('Bringing the schema up to date', process.execPath, tsx('server/cli/migrate.ts'), asOwner);
-  await step('Looking for the demo workshop', process.execPath, tsx('seed/index.ts'), asOwner);
+  await step('Looking whether the book is empty', process.execPath, tsx('seed/index.ts'), asOwner);
   if (!dev && clientIsOld())
     await step('Building the client', program('vite'), ['build', '--logLevel', 'warn'], env);
   await serve(env);
+}
+
+/** A demo workshop that was broken off is made again from the beginning. */
+async function withoutHalfADemo(remake) {
+  const unfinished = join(home, 'demo-unfinished');
+  if (!existsSync(unfinished)) return;
+  if (remake === undefined)
+    giveUp(`making the demo workshop was broken off. Empty the database, and remove ${unfinished}.`);
+  begin('Clearing away half a demo workshop');
+  await remake();
+  rmSync(unfinished);
+  done('Clearing away half a demo workshop');
 }
 
 /** Two starts in one folder would pull the database from under each other. */
