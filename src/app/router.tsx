@@ -49,6 +49,9 @@ async function guard(client: QueryClient, request: Request) {
   const { pathname, search } = new URL(request.url);
   try {
     const session = await client.query({ ...sessionQuery, staleTime: 'static' });
+    const { user, workshop, person } = session;
+    const missing = workshop.second_factor_roles.includes(person.role) && !user.second_factor;
+    if (missing && pathname !== paths.account) return redirect(paths.account);
     if (pathname === paths.today && session.person.role === 'goldsmith') return redirect(paths.myBench);
     return null;
   } catch (error) {

@@ -48,6 +48,16 @@ export interface SendOptions {
 
 const BASE = '/api/v1';
 
+let opened_as: string | null = null;
+
+/**
+ * Names the person that this page was opened as, in every request from now on: where another tab has signed somebody
+ * else in, the server refuses instead of acting as the wrong one. Null before a sign-in.
+ */
+export function speakAs(person_id: string | null): void {
+  opened_as = person_id;
+}
+
 /** Asks for something; the answer is parsed by its schema. Throws ApiProblem and OfflineError. */
 export async function get<T>(path: string, schema: z.ZodType<T>): Promise<T> {
   return schema.parse(await send('GET', path));
@@ -80,6 +90,7 @@ function readProblem(text: string, status: number): z.output<typeof problem> {
 async function attempt(method: Method, path: string, { body, key }: SendOptions): Promise<Response> {
   const headers = new Headers({ Accept: 'application/json' });
   if (method !== 'GET') headers.set('X-Grainward', '1');
+  if (opened_as !== null) headers.set('X-Grainward-Person', opened_as);
   if (key !== undefined) headers.set('Idempotency-Key', key);
   if (body !== undefined && !(body instanceof FormData)) headers.set('Content-Type', 'application/json');
   const payload = body === undefined ? null : body instanceof FormData ? body : JSON.stringify(body);

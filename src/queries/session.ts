@@ -3,12 +3,16 @@ import { queryOptions, useQueryClient, useSuspenseQuery } from '@tanstack/react-
 import type { Action } from '../../shared/permissions.ts';
 import { sessionJson } from '../../shared/schemas/identity.ts';
 import type { SessionJson } from '../../shared/schemas/identity.ts';
-import { get, send } from '../lib/api-client.ts';
+import { get, send, speakAs } from '../lib/api-client.ts';
 import { keys } from './keys.ts';
 
 export const sessionQuery = queryOptions({
   queryKey: keys.session,
-  queryFn: () => get('/session', sessionJson),
+  queryFn: async () => {
+    const session = await get('/session', sessionJson);
+    speakAs(session.person.id);
+    return session;
+  },
   retry: false,
   staleTime: 30_000,
 });

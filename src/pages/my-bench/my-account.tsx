@@ -8,6 +8,7 @@ import { Page, Section } from '../../components/ui/page.tsx';
 import { TextField } from '../../components/ui/text-field.tsx';
 import { useSession, useSignOut } from '../../queries/session.ts';
 import { useWrite } from '../../queries/writes.ts';
+import { SecondFactor } from './second-factor.tsx';
 
 const THEMES = [
   { value: 'system', label: 'As the system', words: 'Light by day, dark by night, if the device does so.' },
@@ -59,6 +60,16 @@ export function MyAccount() {
           act="Change the password"
           done="The password is changed."
         />
+      </Section>
+      <Section
+        heading="Second factor"
+        notes={
+          <p>
+            After the password, a code of an authenticator. Whoever learns the password alone can’t sign in.
+          </p>
+        }
+      >
+        <SecondFactor />
       </Section>
       <Section heading="Look" notes={<p>Kept on this device.</p>}>
         <Choices legend="Theme" value={theme} onChange={setTheme} choices={THEMES} />

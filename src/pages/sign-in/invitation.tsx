@@ -18,6 +18,7 @@ export function Invitation() {
   const [info, setInfo] = useState<Info | null>(null);
   const [refused, setRefused] = useState<string | null>(null);
   const [password, setPassword] = useState('');
+  const [code, setCode] = useState<string | null>(null);
   const navigate = useNavigate();
   const client = useQueryClient();
   useEffect(() => {
@@ -28,7 +29,7 @@ export function Invitation() {
       );
   }, [token]);
   const form = useOutsideForm(async () => {
-    await send('POST', '/invitations/accept', { body: { token, password } });
+    await send('POST', '/invitations/accept', { body: { token, password, code } });
     client.clear();
     await navigate('/');
   });
@@ -71,6 +72,16 @@ export function Invitation() {
             onChange={setPassword}
             error={form.errorOf('password')}
           />
+          {code !== null || form.code === 'second_factor_needed' ? (
+            <TextField
+              label="Code"
+              hint="Six figures of your authenticator, or a recovery code."
+              autoComplete="one-time-code"
+              value={code ?? ''}
+              onChange={setCode}
+              error={form.errorOf('code')}
+            />
+          ) : null}
           <Button kind="primary" counter submit busy={form.busy ? 'Joining …' : false}>
             Join the workshop
           </Button>

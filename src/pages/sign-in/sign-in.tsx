@@ -12,11 +12,12 @@ import { useOutsideForm } from './use-outside-form.ts';
 export function SignIn() {
   const [email, setEmail] = useState('');
   const [password, setPassword] = useState('');
+  const [code, setCode] = useState<string | null>(null);
   const [query] = useSearchParams();
   const navigate = useNavigate();
   const client = useQueryClient();
   const form = useOutsideForm(async () => {
-    await send('POST', '/session', { body: { email, password } });
+    await send('POST', '/session', { body: { email, password, code } });
     client.clear();
     const to = query.get('to') ?? '/';
     await navigate(to.startsWith('/') && !to.startsWith('//') ? to : '/');
@@ -35,7 +36,9 @@ export function SignIn() {
             Ask its proprietor to renew it.
           </Notice>
         )}
-        {form.problem === null ? null : <Refused sentence={form.problem} />}
+        {form.problem === null ? null : (
+          <Refused sentence={form.problem} waits={form.code === 'second_factor_needed'} />
+        )}
         <TextField
           label="E-mail address"
           type="email"
@@ -52,6 +55,16 @@ export function SignIn() {
           onChange={setPassword}
           error={form.errorOf('password')}
         />
+        {code !== null || form.code === 'second_factor_needed' ? (
+          <TextField
+            label="Code"
+            hint="Six figures of your authenticator, or a recovery code."
+            autoComplete="one-time-code"
+            value={code ?? ''}
+            onChange={setCode}
+            error={form.errorOf('code')}
+          />
+        ) : null}
         <Button kind="primary" counter submit busy={form.busy ? 'Signing in …' : false}>
           Sign in
         </Button>
@@ -69,12 +82,13 @@ export function SignIn() {
 }
 
 /** The first sentence says what is so and stands bold. */
-function Refused({ sentence }: { readonly sentence: string }) {
+function Refused({ sentence, waits }: { readonly sentence: string; readonly waits: boolean }) {
   const end = sentence.indexOf('. ') + 1;
+  const severity = waits ? 'waiting' : 'fault';
   return end === 0 ? (
-    <Notice severity="fault" what={sentence} />
+    <Notice severity={severity} what={sentence} />
   ) : (
-    <Notice severity="fault" what={sentence.slice(0, end)}>
+    <Notice severity={severity} what={sentence.slice(0, end)}>
       {sentence.slice(end)}
     </Notice>
   );

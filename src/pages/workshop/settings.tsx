@@ -8,6 +8,7 @@ import { words } from '../../lib/formats.ts';
 import { useAccounts, useSettings } from '../../queries/registers.ts';
 import { useSession } from '../../queries/session.ts';
 import { EventFields } from './event-fields.tsx';
+import { SecondFactorRoles } from './second-factor-roles.tsx';
 import { WorkshopNav } from './workshop-nav.tsx';
 
 const SINGLE = [
@@ -58,6 +59,16 @@ export function Settings() {
   const may = session.can('settings.set');
   return (
     <Page title="Limits and estimates" lede="Every change stands in the book." nav={<WorkshopNav />}>
+      {may ? (
+        <Section
+          heading="Second factor"
+          notes={
+            <p>Who has the role does nothing here before a second factor is set up under “My account”.</p>
+          }
+        >
+          <SecondFactorRoles />
+        </Section>
+      ) : null}
       {SINGLE.map(({ what, heading, notes, label, key, unit }) => (
         <Section key={what} heading={heading} notes={<p>{notes}</p>}>
           <p>

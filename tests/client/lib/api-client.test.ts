@@ -1,7 +1,7 @@
 /** Talking to the server: one refresh, problems with their sentences, a lost line, the header that other sites lack. */
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { z } from '../../../shared/schemas/zod.ts';
-import { ApiProblem, OfflineError, get, send } from '../../../src/lib/api-client.ts';
+import { ApiProblem, OfflineError, get, send, speakAs } from '../../../src/lib/api-client.ts';
 import { broken, fakeServer, json, nothing, problem } from '../support/fake-server.ts';
 
 const lots = z.object({ lots: z.array(z.string()) });
@@ -94,4 +94,20 @@ it('writes carry the header of our own pages and their key; reads carry neither'
 it('an answer that is not as agreed is refused rather than believed', async () => {
   fakeServer({ 'GET /lots': json({ lots: 'all of them' }) });
   expect(await refusal(get('/lots', lots))).toBeInstanceOf(z.ZodError);
+});
+
+it('a page names the person that it was opened as, so that nothing is done as somebody else', async () => {
+  const persons: (string | null)[] = [];
+  fakeServer({ 'GET /lots': json({ lots: [] }) });
+  const plain = fetch;
+  vi.stubGlobal('fetch', (address: string, init: RequestInit) => {
+    persons.push(new Headers(init.headers).get('X-Grainward-Person'));
+    return plain(address, init);
+  });
+  await get('/lots', lots);
+  speakAs('p1');
+  await get('/lots', lots);
+  speakAs(null);
+  await get('/lots', lots);
+  expect(persons).toEqual([null, 'p1', null]);
 });
