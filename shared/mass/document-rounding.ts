@@ -14,7 +14,7 @@ import { GRAMS_PER_UNIT, fromUnit } from './units.ts';
 interface RoundingRule {
   readonly words: string;
   readonly step_ozt: Decimal;
-  readonly mode: Decimal.Rounding;
+  readonly mode: typeof Decimal.ROUND_DOWN | typeof Decimal.ROUND_HALF_UP;
 }
 
 export const DOCUMENT_RULES = {
