@@ -33,25 +33,6 @@ export function shallowOnly(): RequestHandler {
   };
 }
 
-/** Deeper than any form of ours by far; what walks a body later may then do so by recursion. */
-const MOST_LAYERS = 20;
-
-/** Refuses a parsed body that is nested deeper than any of ours. */
-export function shallowOnly(): RequestHandler {
-  return (request, _response, next) => {
-    let layer: unknown[] = [request.body];
-    for (let depth = 0; layer.length > 0; depth += 1) {
-      if (depth > MOST_LAYERS)
-        throw new ProblemError(
-          'malformed',
-          'The request is nested deeper than anything that is asked for here.',
-        );
-      layer = layer.flatMap(within);
-    }
-    next();
-  };
-}
-
 function within(value: unknown): unknown[] {
   if (typeof value !== 'object' || value === null) return [];
   const values: unknown[] = Object.values(value);
