@@ -47,7 +47,7 @@ function balancesSql(by: BalancesBy, past: boolean): string {
     WHERE is_place(a.kind) OR a.kind = 'metal_account'`;
   const grams = MASSES.map((m) => `grams(x.${m}_ug) AS ${m}_g`).join(', ');
   const outer = (inner: string) => `SELECT x.key, x.name, x.kind, x.part, ${grams} FROM (${inner}) x
-    WHERE x.gross_ug <> 0 OR x.gold_ug <> 0 OR x.silver_ug <> 0 OR x.platinum_ug <> 0 OR x.palladium_ug <> 0 ORDER BY x.kind NULLS LAST, x.name LIMIT 5000`;
+    WHERE x.gross_ug <> 0 OR x.gold_ug <> 0 OR x.silver_ug <> 0 OR x.platinum_ug <> 0 OR x.palladium_ug <> 0 ORDER BY x.kind NULLS LAST, x.name, x.part DESC LIMIT 5000`;
   switch (by) {
     case 'place':
       return outer(
