@@ -4,6 +4,7 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { Express } from 'express';
+import { pino } from 'pino';
 import request from 'supertest';
 import type { Test } from 'supertest';
 import { createApp } from '../../server/app.ts';
@@ -24,8 +25,14 @@ export interface TestServer extends Started {
   readonly config: Config;
 }
 
-/** Starts the program on a fresh database. Hashing is cheap here, so that tests are quick. */
-export async function startTestServer(more: Partial<Config> = {}): Promise<TestServer> {
+/**
+ * Starts the program on a fresh database. Hashing is cheap here, so that tests are quick. The lines of the log go into
+ * `log_lines`, where a test wants to read them.
+ */
+export async function startTestServer(
+  more: Partial<Config> = {},
+  log_lines: string[] | null = null,
+): Promise<TestServer> {
   const db = await createTestDatabase();
   const files = mkdtempSync(join(tmpdir(), 'grainward-files-'));
   const { privateKey } = generateKeyPairSync('ed25519');
@@ -45,10 +52,18 @@ export async function startTestServer(more: Partial<Config> = {}): Promise<TestS
     trust_proxy: false,
     ...more,
   };
-  const started = await startContext(config, () => 'http://127.0.0.1');
+  const publicUrl = () => config.public_url ?? 'http://127.0.0.1';
+  const started =
+    log_lines === null
+      ? await startContext(config, publicUrl)
+      : await startContext(
+          config,
+          publicUrl,
+          pino({ level: 'info' }, { write: (line) => void log_lines.push(line) }),
+        );
   return {
     ...started,
-    app: createApp(started.context),
+    app: createApp(started.context, started.local_mail),
     db,
     config,
     async close() {
@@ -89,6 +104,25 @@ export class Person {
   keep(headers: Readonly<Record<string, unknown>>): void {
     const set = headers['set-cookie'];
     if (Array.isArray(set)) this.#cookies = set.map((cookie) => String(cookie).split(';')[0] ?? '');
+  }
+
+  /** The same browser once more: another tab, or what a thief has copied. */
+  copy(app: Express = this.#app): Person {
+    const copied = new Person(app);
+    copied.email = this.email;
+    copied.#cookies = [...this.#cookies];
+    return copied;
+  }
+
+  /** The value of a cookie by its name without prefix. */
+  cookie(name: string): string {
+    const found = this.#cookies.find((cookie) => cookie.replace('__Host-', '').startsWith(`${name}=`));
+    return found?.slice(found.indexOf('=') + 1) ?? '';
+  }
+
+  /** Uses other cookies from now on. */
+  carry(cookies: readonly string[]): void {
+    this.#cookies = [...cookies];
   }
 
   get cookies(): readonly string[] {
@@ -156,4 +190,31 @@ export async function addMember(
   if (accepted.status !== 204) throw new Error(`accept: ${accepted.status} ${JSON.stringify(accepted.body)}`);
   person.keep(accepted.headers);
   return person;
+}
+
+/** Signs in with a password; throws where it is refused. */
+export async function signIn(
+  server: { readonly app: Express },
+  email: string,
+  password: string = PASSWORD,
+): Promise<Person> {
+  const person = new Person(server.app);
+  person.email = email;
+  const answer = await person.post('/session', { email, password });
+  if (answer.status !== 204) throw new Error(`sign-in: ${answer.status} ${JSON.stringify(answer.body)}`);
+  person.keep(answer.headers);
+  return person;
+}
+
+/** The secret behind the # of the newest e-mail to an address; waits for the e-mail up to five seconds. */
+export async function secretInMail(server: TestServer, email: string, subject: RegExp): Promise<string> {
+  for (let tries = 0; tries < 100; tries += 1) {
+    const mail = server.local_mail
+      ?.messages()
+      .find((message) => message.to.includes(email) && subject.test(message.subject));
+    const token = /#([\w-]+)/.exec(mail?.text ?? '')?.[1];
+    if (token !== undefined) return token;
+    await new Promise((resolve) => setTimeout(resolve, 50));
+  }
+  throw new Error(`no e-mail to ${email}`);
 }
