@@ -50,6 +50,8 @@ export const lossRow = z.object({
   vouchers: z.string(),
   worked_g: z.string(),
   loss_g: z.string(),
+  /** What of the loss corrects or reverses weigh-backs of before the period: shown apart from the period's own. */
+  corrected_g: z.string(),
   allowance_g: z.string().nullable(),
   limit_of_error_g: z.string(),
   recovered_g: z.string().nullable(),

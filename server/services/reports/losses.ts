@@ -45,10 +45,7 @@ export async function readLosses(tx: Tx, query: LossesQuery): Promise<LossesJson
 const percent = (part: bigint, whole: bigint): string | null =>
   lossPercent(part, whole)?.toDecimalPlaces(3, Decimal.ROUND_HALF_EVEN).toFixed(3) ?? null;
 
-/**
- * A weigh-back's loss, with what was worked and allowed on its paper; corrections and reversals of it count with it.
- * Independent limits of error add in squares.
- */
+/** Losses with what was worked and allowed on each weigh-back's paper. Independent limits of error add in squares. */
 function lossesSql({ by, metal }: LossesQuery): string {
   const keys = {
     operation: [
@@ -66,9 +63,10 @@ function lossesSql({ by, metal }: LossesQuery): string {
     by === 'operation' || by === 'month' ? RECOVERED[by].replaceAll('METAL', metal) : 'NULL::text';
   return `SELECT x.*, ${recovered} AS recovered_g FROM (
     SELECT ${key} AS key, ${name} AS name, ${by === 'operation' ? 'max(r.operation)' : 'NULL::text'} AS operation,
-      count(*)::text AS vouchers, grams(sum(r.worked)::bigint) AS worked_g, grams(sum(r.loss)::bigint) AS loss_g,
+      sum(r.vouchers)::text AS vouchers, grams(sum(r.worked)::bigint) AS worked_g, grams(sum(r.loss)::bigint) AS loss_g,
       CASE WHEN count(r.allowance) = 0 THEN NULL ELSE grams(sum(r.allowance)::bigint) END AS allowance_g,
-      grams(round(sqrt(sum(coalesce(r.limit_ug, 0) ^ 2)))::bigint) AS limit_of_error_g
+      grams(round(sqrt(greatest(sum(coalesce(r.limit_squared, 0)), 0)))::bigint) AS limit_of_error_g,
+      grams(coalesce(sum(r.loss) FILTER (WHERE r.of_before), 0)::bigint) AS corrected_g
     FROM (${WEIGH_BACKS.replaceAll('METAL', metal)}) r
     LEFT JOIN account b ON b.workshop_id = current_workshop() AND b.id = r.bench
     LEFT JOIN person p ON p.workshop_id = current_workshop() AND p.id = r.person_id
@@ -77,20 +75,28 @@ function lossesSql({ by, metal }: LossesQuery): string {
   ) x ORDER BY ${by === 'month' ? 'x.key' : 'x.loss_g::numeric DESC'} LIMIT 500`;
 }
 
-const WEIGH_BACKS = `SELECT r.operation, r.bench, r.person_id, r.job_id, r.business_date, l.alloy,
-    ((r.detail->>'worked_METAL_g')::numeric * 1000000)::bigint AS worked,
-    CASE WHEN r.detail->>'judged_metal' = 'METAL' THEN ((r.detail->>'allowance_g')::numeric * 1000000)::bigint END AS allowance,
-    CASE WHEN r.detail->>'judged_metal' = 'METAL' THEN ((r.detail->>'limit_of_error_g')::numeric * 1000000) END AS limit_ug,
-    coalesce(e.METAL_ug, 0) AS loss
+/**
+ * Weigh-backs of the period, and what was corrected or reversed in it: a reversal takes back what its voucher counted,
+ * a correction adds its difference; both under the names of the first voucher, in the period of their own date.
+ */
+const WEIGH_BACKS = `SELECT root.operation, root.bench, root.person_id, root.job_id, r.business_date, l.alloy, way.sign AS vouchers,
+    way.sign * ((root.detail->>'worked_METAL_g')::numeric * 1000000)::bigint AS worked,
+    CASE WHEN root.detail->>'judged_metal' = 'METAL' THEN nullif(way.sign, 0) * ((root.detail->>'allowance_g')::numeric * 1000000)::bigint END AS allowance,
+    CASE WHEN root.detail->>'judged_metal' = 'METAL' THEN way.sign * ((root.detail->>'limit_of_error_g')::numeric * 1000000) ^ 2 END AS limit_squared,
+    coalesce(e.METAL_ug, 0) AS loss, root.business_date < $1::date AS of_before
   FROM record r
+  LEFT JOIN record first ON first.workshop_id = r.workshop_id AND first.id = coalesce(r.reverses, nullif(r.detail->>'corrects', '')::uuid)
+  LEFT JOIN record second ON second.workshop_id = r.workshop_id AND second.id = nullif(first.detail->>'corrects', '')::uuid
+  JOIN record root ON root.workshop_id = r.workshop_id AND root.sequence = coalesce(second.sequence, first.sequence, r.sequence)
+  CROSS JOIN LATERAL (SELECT CASE WHEN r.kind = 'weigh_back' THEN 1 WHEN r.kind = 'reversal' AND second.id IS NULL THEN -1 ELSE 0 END AS sign) way
   LEFT JOIN LATERAL (
     SELECT sum(e.METAL_ug)::bigint AS METAL_ug, min(e.lot_id::text)::uuid AS lot_id FROM entry e
     JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id AND a.kind = 'working_loss'
     WHERE e.workshop_id = r.workshop_id AND e.voucher_sequence = r.sequence
   ) e ON true
   LEFT JOIN lot l ON l.workshop_id = r.workshop_id AND l.id = e.lot_id
-  WHERE r.workshop_id = current_workshop() AND r.kind = 'weigh_back' AND r.business_date BETWEEN $1::date AND $2::date
-    AND NOT EXISTS (SELECT 1 FROM record v WHERE v.workshop_id = r.workshop_id AND v.reverses = r.id)`;
+  WHERE r.workshop_id = current_workshop() AND r.kind IN ('weigh_back', 'correction', 'reversal') AND root.kind = 'weigh_back'
+    AND r.business_date BETWEEN $1::date AND $2::date`;
 
 /** What settled sweeps gave back: their estimate, mended by the outturn, once nothing of the lot is left at a place. */
 const SETTLED = `FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id AND a.kind = 'working_loss'

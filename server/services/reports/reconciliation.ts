@@ -25,8 +25,8 @@ const sumRow = z.object({
 /** The reconciliation of a period for one owner (the house, a party) or all. */
 export async function readReconciliation(tx: Tx, query: ReconciliationQuery): Promise<ReconciliationJson> {
   const bind = [query.from, query.to, query.owner];
-  const opening = massOf(await tx.one(z.object(massFields), placesUpTo('e.business_date < $1::date'), bind));
-  const closing = massOf(await tx.one(z.object(massFields), placesUpTo('e.business_date <= $2::date'), bind));
+  const opening = massOf(await tx.one(z.object(massFields), placesAt('$1::date - 1'), bind));
+  const closing = massOf(await tx.one(z.object(massFields), placesAt('$2::date'), bind));
   const sums = (await tx.rows(sumRow, SUMS, bind)).map((row) => ({ ...row, mass: massOf(row) }));
   const reckoned = reconcile(opening, closing, sums);
   return {
@@ -49,9 +49,11 @@ const FROM = `FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a
   JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id
   WHERE e.workshop_id = current_workshop() AND ${OWNED}`;
 
-/** The bound dates are named in every statement, so that one list of values serves them all. */
-const placesUpTo = (when: string) =>
-  `SELECT ${grams('e')} ${FROM} AND is_place(a.kind) AND ${when} AND $1::date IS NOT NULL AND $2::date IS NOT NULL`;
+/** What places held at the end of a day. The bound dates are named in every statement, so that one list of values serves them all. */
+const placesAt = (day: string) => `SELECT ${grams('b')} FROM balances_at(${day}) b
+  JOIN account a ON a.workshop_id = b.workshop_id AND a.id = b.account_id AND is_place(a.kind)
+  JOIN lot l ON l.workshop_id = b.workshop_id AND l.id = b.lot_id
+  WHERE ${OWNED} AND $1::date IS NOT NULL AND $2::date IS NOT NULL`;
 
 /** A voucher that mends one of a period that was closed when it was recorded is told apart; so is a change of owner. */
 const SUMS = `SELECT a.kind AS account_kind, coalesce(first.kind, r.kind) AS voucher_kind, CASE WHEN e.gross_ug < 0 THEN 'from' ELSE 'onto' END AS side,
@@ -66,20 +68,30 @@ const SUMS = `SELECT a.kind AS account_kind, coalesce(first.kind, r.kind) AS vou
   WHERE`,
   )} AND e.business_date BETWEEN $1::date AND $2::date GROUP BY 1, 2, 3, 4`;
 
-const PLACES = `SELECT a.id::text AS account_id, a.name, a.kind, m.metal,
-    grams(coalesce(sum(m.ug) FILTER (WHERE e.business_date < $1::date), 0)::bigint) AS opening_g,
-    grams(coalesce(sum(m.ug) FILTER (WHERE e.business_date BETWEEN $1::date AND $2::date AND m.ug > 0), 0)::bigint) AS in_g,
-    grams(coalesce(-sum(m.ug) FILTER (WHERE e.business_date BETWEEN $1::date AND $2::date AND m.ug < 0), 0)::bigint) AS out_g,
-    (SELECT grams(coalesce(sum(CASE m.metal WHEN 'gold' THEN x.gold_ug WHEN 'silver' THEN x.silver_ug WHEN 'platinum' THEN x.platinum_ug ELSE x.palladium_ug END), 0)::bigint)
-      FROM record r JOIN entry x ON x.workshop_id = r.workshop_id AND x.voucher_sequence = r.sequence
-      JOIN account y ON y.workshop_id = x.workshop_id AND y.id = x.account_id AND y.kind = 'working_loss'
-      JOIN lot z ON z.workshop_id = x.workshop_id AND z.id = x.lot_id
-      WHERE r.workshop_id = current_workshop() AND r.bench = a.id AND r.business_date BETWEEN $1::date AND $2::date
-        AND ${OWNED.replaceAll('l.', 'z.')}) AS loss_g,
-    grams(coalesce(sum(m.ug), 0)::bigint) AS closing_g
-  ${FROM.replace('WHERE', `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', e.${m}_ug)`).join(', ')}) AS m(metal, ug) WHERE`)}
-    AND is_place(a.kind) AND e.business_date <= $2::date
-  GROUP BY a.id, a.name, a.kind, m.metal
-  HAVING sum(m.ug) <> 0 OR coalesce(sum(abs(m.ug)) FILTER (WHERE e.business_date >= $1::date), 0) <> 0
-  ORDER BY array_position(ARRAY['gold', 'silver', 'platinum', 'palladium'], m.metal),
+const byMetal = (alias: string) =>
+  `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', ${alias}.${m}_ug)`).join(', ')}) AS m(metal, ug)`;
+
+/** What each place held before the period, and what came and went in it. */
+const MOVED = `
+  SELECT b.account_id, m.metal, m.ug AS opening, 0 AS came, 0 AS went FROM balances_at($1::date - 1) b
+    JOIN lot l ON l.workshop_id = b.workshop_id AND l.id = b.lot_id ${byMetal('b')} WHERE ${OWNED}
+  UNION ALL
+  SELECT e.account_id, m.metal, 0, greatest(m.ug, 0), greatest(-m.ug, 0) FROM entry e
+    JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id ${byMetal('e')}
+    WHERE e.workshop_id = current_workshop() AND e.business_date BETWEEN $1::date AND $2::date AND ${OWNED}`;
+
+/** Working loss that was booked by vouchers of a bench. */
+const LOSS = `SELECT r.bench AS account_id, m.metal, sum(m.ug) AS loss FROM record r
+    JOIN entry e ON e.workshop_id = r.workshop_id AND e.voucher_sequence = r.sequence
+    JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id AND a.kind = 'working_loss'
+    JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id ${byMetal('e')}
+    WHERE r.workshop_id = current_workshop() AND r.business_date BETWEEN $1::date AND $2::date AND ${OWNED} GROUP BY 1, 2`;
+
+const PLACES = `SELECT a.id::text AS account_id, a.name, a.kind, x.metal, grams(sum(x.opening)::bigint) AS opening_g,
+    grams(sum(x.came)::bigint) AS in_g, grams(sum(x.went)::bigint) AS out_g, grams(coalesce(max(y.loss), 0)::bigint) AS loss_g,
+    grams(sum(x.opening + x.came - x.went)::bigint) AS closing_g
+  FROM (${MOVED}) x JOIN account a ON a.workshop_id = current_workshop() AND a.id = x.account_id AND is_place(a.kind)
+  LEFT JOIN (${LOSS}) y ON y.account_id = x.account_id AND y.metal = x.metal
+  GROUP BY a.id, a.name, a.kind, x.metal HAVING sum(x.opening) <> 0 OR sum(x.came + x.went) <> 0
+  ORDER BY array_position(ARRAY['gold', 'silver', 'platinum', 'palladium'], x.metal),
     array_position(ARRAY['safe', 'bench', 'station', 'bin', 'outworker', 'approval', 'courier', 'refiner'], a.kind), a.name`;
