@@ -99,7 +99,7 @@ describe('after a weigh-back was reversed', () => {
   };
 
   it('its month keeps what it counted, and the reversal takes it back on its own day', async () => {
-    expect(await ofJob(`${FEBRUARY}`)).toBe('1 5.850000 0.058500 0.000000');
+    expect(await ofJob(FEBRUARY)).toBe('1 5.850000 0.058500 0.000000');
     expect(await ofJob(since)).toBe('-1 -5.850000 -0.058500 -0.058500');
   });
 
