@@ -88,6 +88,10 @@ describe('the mass of a fineness', () => {
     const third = new Decimal(1000).div(3);
     const mass = massFromFineness(10n, fineness({ gold: third, silver: third, platinum: third }));
     expect(isPossibleMass(mass)).toBe(true);
+    const sixths = { gold: third.times(2), silver: third.div(2), platinum: third.div(2) };
+    expect(massFromFineness(24n, fineness(sixths))).toEqual(
+      massVector({ gross: 24n, gold: 16n, silver: 4n, platinum: 4n }),
+    );
     const halves = { gold: '333.33335', silver: '333.33335', platinum: '333.3333' };
     expect(isPossibleMass(massFromFineness(MAX_MASS_UG, fineness(halves)))).toBe(true);
   });
