@@ -35,7 +35,11 @@ export function makeRouter(client: QueryClient) {
     {
       element: <Frame />,
       errorElement: <ErrorPage alone />,
-      hydrateFallbackElement: <p className="opening">Reading the book …</p>,
+      hydrateFallbackElement: (
+        <main>
+          <h1 className="opening">Reading the book …</h1>
+        </main>
+      ),
       loader: ({ request }) => guard(client, request),
       children: [
         { errorElement: <ErrorPage />, children: [...inside, { path: '*', element: <NotFound /> }] },

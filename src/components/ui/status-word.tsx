@@ -41,6 +41,7 @@ export const STATUS_TONES = {
   Failed: 'rouge',
   'To be explained': 'rouge',
   'Not acknowledged': 'pickle',
+  'Take over this metal': 'pickle',
   Waiting: 'pickle',
   'Being put together': 'pickle',
   'On the way': 'pickle',

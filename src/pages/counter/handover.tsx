@@ -2,8 +2,7 @@
 import { useState } from 'react';
 import { useParams } from 'react-router-dom';
 import { paths } from '../../app/paths.ts';
-import { LotChip } from '../../components/domain/lot-chip.tsx';
-import { FineCell } from '../../components/domain/fine-cell.tsx';
+import { HandoverSlip } from '../../components/domain/handover-slip.tsx';
 import { Button } from '../../components/ui/button.tsx';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
@@ -11,7 +10,6 @@ import { TextField } from '../../components/ui/text-field.tsx';
 import type { TypedWeighing } from '../../forms/typed.ts';
 import { noWeighing, typedWeighing } from '../../forms/typed.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
-import { gramsFigure } from '../../lib/formats.ts';
 import { useToday } from '../../queries/today.ts';
 import type { HandoverRow } from '../../../shared/schemas/today.ts';
 import { usePosted } from '../../components/domain/use-posted.ts';
@@ -22,28 +20,19 @@ export function Handover() {
   const handover = useToday().handovers.find((row) => row.voucher_id === id);
   if (handover === undefined)
     return <Page title="Handover" lede="Nothing of that voucher waits to be taken over." />;
-  return <HandoverSlip handover={handover} />;
+  return <Waiting handover={handover} />;
 }
 
-function HandoverSlip({ handover }: { readonly handover: HandoverRow }) {
+function Waiting({ handover }: { readonly handover: HandoverRow }) {
   return (
     <Page title="Handover" lede={`${handover.from_name} to ${handover.to_name}`} margin="Counter">
       <Section
         heading={handover.state === 'disputed' ? 'Settle the dispute' : 'Take it over'}
         notes={<p>Both see the same figures. Until it is acknowledged, the giver answers for it.</p>}
       >
-        <div className="slip">
-          <p className="fig-label">{handover.place_name}</p>
-          <FineCell masses={handover} />
-          <p className="text-ink-2">
-            gross {gramsFigure(handover.gross_g)} g
-            {handover.job_code === null ? '' : `, job ${handover.job_code}`}
-          </p>
-          {handover.lots.map((lot) => (
-            <LotChip key={lot.id} {...lot} />
-          ))}
-        </div>
-        {handover.state === 'waiting' ? <TakeOver handover={handover} /> : <Settle handover={handover} />}
+        <HandoverSlip handover={handover} links>
+          {handover.state === 'waiting' ? <TakeOver handover={handover} /> : <Settle handover={handover} />}
+        </HandoverSlip>
       </Section>
     </Page>
   );

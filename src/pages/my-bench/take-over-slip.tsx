@@ -1,16 +1,15 @@
 /** The paper slip of a handover: what, from whom, for which job; "I have it", or "Weight differs" with a weighing. */
 import { useState } from 'react';
 import type { HandoverRow } from '../../../shared/schemas/today.ts';
-import { FineCell } from '../../components/domain/fine-cell.tsx';
+import { HandoverSlip } from '../../components/domain/handover-slip.tsx';
 import { Button } from '../../components/ui/button.tsx';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
-import { StatusWord } from '../../components/ui/status-word.tsx';
 import { TextField } from '../../components/ui/text-field.tsx';
 import { useToast } from '../../components/ui/toast.tsx';
 import { WeightField } from '../../components/ui/weight-field.tsx';
 import { noWeighing, orNull, typedWeighing } from '../../forms/typed.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
-import { gramsFigure, momentText, numberText } from '../../lib/formats.ts';
+import { numberText } from '../../lib/formats.ts';
 
 export function TakeOverSlip({ handover }: { readonly handover: HandoverRow }) {
   const [differs, setDiffers] = useState(false);
@@ -28,37 +27,21 @@ export function TakeOverSlip({ handover }: { readonly handover: HandoverRow }) {
     preview: false,
   });
   return (
-    <div className="slip">
-      <p className="m-0 flex justify-between">
-        <span className="fig-label">{handover.place_name}</span>
-        <StatusWord status={handover.state === 'disputed' ? 'Disputed' : 'Waiting'} />
-      </p>
-      <div className="text-2xl">
-        <FineCell masses={handover} />
-      </div>
-      <p className="text-ink-2">
-        gross {gramsFigure(handover.gross_g)} g
-        {handover.lots.map((lot) => (
-          <span key={lot.id} className="block">
-            {lot.code} {lot.description}
-          </span>
-        ))}
-        from {handover.from_name}, {momentText(handover.recorded_at)}
-        {handover.job_code === null ? '' : `, job ${handover.job_code}`}
-      </p>
+    <HandoverSlip handover={handover} links={false}>
       <ErrorSummary errors={form.errors} shown={form.tried} />
       {handover.state === 'disputed' ? (
         <p>The counter weighs it again before both of you.</p>
       ) : differs ? (
         <Dispute handover={handover} onKeep={() => setDiffers(false)} />
       ) : (
-        <div className="flex flex-wrap gap-2">
+        <div className="slip-acts">
           <Button counter onPress={() => setDiffers(true)}>
             Weight differs
           </Button>
           <Button
             counter
             kind="primary"
+            icon="check"
             busy={form.busy ? 'Posting …' : false}
             onPress={() => void form.submit()}
           >
@@ -66,7 +49,7 @@ export function TakeOverSlip({ handover }: { readonly handover: HandoverRow }) {
           </Button>
         </div>
       )}
-    </div>
+    </HandoverSlip>
   );
 }
 
