@@ -89,7 +89,7 @@ export function AskForMetal({ bench }: { readonly bench: MyBenchJson }) {
         />
         <TextField label="Remark" value={values.note} onChange={(note) => set({ note })} />
       </div>
-      <p>
+      <p className="mt-4">
         <Button kind="primary" icon="in" busy={busy ? 'Asking …' : false} onPress={() => void ask()}>
           Ask for metal
         </Button>
