@@ -13,6 +13,7 @@ import type { Route } from './route.ts';
 import { secondFactorRoutes } from './second-factor.ts';
 import { sessionRoutes } from './session.ts';
 import { signatureRoutes } from './signatures.ts';
+import { statementRoutes } from './statements.ts';
 import { todayRoutes } from './today.ts';
 
 export const routes: readonly Route[] = [
@@ -27,6 +28,7 @@ export const routes: readonly Route[] = [
   ...lotAndVoucherRoutes,
   ...todayRoutes,
   ...reportRoutes,
+  ...statementRoutes,
   ...bookCheckRoutes,
   ...documentRoutes,
   ...dossierRoutes,

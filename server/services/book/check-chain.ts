@@ -4,7 +4,6 @@
  * with the number of the voucher.
  */
 import { createHash } from 'node:crypto';
-import type { Detail } from '../../../shared/book/draft.ts';
 import { isVoucherKind } from '../../../shared/book/kinds.ts';
 import { canonicalJson } from '../../../shared/chain/canonical.ts';
 import { readLine } from '../../../shared/chain/record-line.ts';
@@ -98,7 +97,7 @@ function saysTheSame(record: Stored, { entries, ...line }: ChainRecord): boolean
   return same && named && (record.same_day || entries.length === 0);
 }
 
-const leafOf = (detail: Detail, key: string) => leaf.parse(detail[key] ?? null);
+const leafOf = (detail: ChainRecord['detail'], key: string) => leaf.parse(detail[key] ?? null);
 
 /** Values of JSON as one text, whatever the order of their keys. */
 function sorted(value: unknown): string {
