@@ -24,7 +24,7 @@ async function main() {
     ...process.env,
     TEST_DATABASE_URL: cluster.url('grainward_owner', 'postgres'),
     TEST_DATABASE_APP_URL: cluster.url('grainward_app', 'postgres'),
-    PGBENCH: join(bin, 'pgbench'),
+    PATH: `${bin}:${process.env.PATH}`,
   };
   return (await run(process.execPath, ['--import', 'tsx', 'tests/load/bench.ts'], { cwd: root, env })).code;
 }

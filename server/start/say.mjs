@@ -7,10 +7,10 @@ export function begin(step) {
   process.stdout.write(`· ${step} …\n`);
 }
 
-/** Says that a step is done, and how long it took. */
-export function done(step, words = '') {
+/** Says that a step is done, and how long it took; a cross where it is not `well`. */
+export function done(step, words = '', well = true) {
   const seconds = ((Date.now() - (started.get(step) ?? Date.now())) / 1000).toFixed(1);
-  process.stdout.write(`✓ ${step}${words === '' ? '' : `: ${words}`} (${seconds} s)\n`);
+  process.stdout.write(`${well ? '✓' : '✗'} ${step}${words === '' ? '' : `: ${words}`} (${seconds} s)\n`);
 }
 
 /** A reason, in a sentence, why a script can't go on. */

@@ -47,7 +47,7 @@ async function check(name, path, args, env) {
   const { code } = await run(path, args, { cwd: root, env });
   if (code === 0) passed += 1;
   else failed += 1;
-  done(name, code === 0 ? 'passed' : 'FAILED');
+  done(name, code === 0 ? 'passed' : 'FAILED', code === 0);
 }
 
 async function tests(home, env) {
@@ -65,5 +65,5 @@ async function tests(home, env) {
   passed += inTests('passed');
   failed += inTests('failed') + broken;
   if (code !== 0 && inTests('failed') + broken === 0) failed += 1;
-  done('Tests', code === 0 ? 'passed' : 'FAILED');
+  done('Tests', code === 0 ? 'passed' : 'FAILED', code === 0);
 }

@@ -7,7 +7,7 @@ import { promisify } from 'node:util';
 
 const THREADS = 2;
 
-/** Transactions per second of these scripts by so many clients. PGBENCH names the program. */
+/** Transactions per second of these scripts by so many clients. */
 export async function pgbenchRate(
   database_url: string,
   scripts: readonly (readonly string[])[],
@@ -25,7 +25,7 @@ export async function pgbenchRate(
   const load = ['-n', '-c', String(clients), '-j', String(THREADS), '-T', String(seconds)];
   try {
     const { stdout } = await promisify(execFile)(
-      process.env['PGBENCH'] ?? 'pgbench',
+      'pgbench',
       [...server, ...load, ...files.flat(), url.pathname.slice(1)],
       { env: { ...process.env, PGPASSWORD: url.password } },
     );

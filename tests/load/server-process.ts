@@ -1,6 +1,6 @@
 /** The program as a process of its own, on the database and with the secrets of a test server. */
 import { spawn } from 'node:child_process';
-import { writeFileSync } from 'node:fs';
+import { rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { Config } from '../../server/config.ts';
@@ -13,7 +13,6 @@ export async function startServerProcess(config: Config) {
   const key = join(tmpdir(), `grainward-bench-key-${process.pid}.pem`);
   writeFileSync(key, config.signing_key_pem, { mode: 0o600 });
   const env = {
-    PATH: process.env['PATH'],
     NODE_ENV: 'production',
     PORT: '0',
     DATABASE_URL: config.database_url,
@@ -35,7 +34,10 @@ export async function startServerProcess(config: Config) {
     port,
     close: () =>
       new Promise<void>((resolve) => {
-        child.once('close', () => resolve());
+        child.once('close', () => {
+          rmSync(key);
+          resolve();
+        });
         child.kill('SIGTERM');
       }),
   };
