@@ -10,6 +10,7 @@ import { requestsAndQueue } from './2026-12-01-07-requests-and-queue.ts';
 import { readFacts } from './2026-12-01-08-read-facts.ts';
 import { balancesAtADay } from './2026-12-01-09-balances-at-a-day.ts';
 import { secondFactor } from './2026-12-01-10-second-factor.ts';
+import { lotNewest } from './2026-12-01-11-lot-newest.ts';
 
 export const migrations: readonly Migration[] = [
   workshopsAndPersons,
@@ -22,4 +23,5 @@ export const migrations: readonly Migration[] = [
   readFacts,
   balancesAtADay,
   secondFactor,
+  lotNewest,
 ];

@@ -13,6 +13,7 @@ export const FEBRUARY = 'from=2026-02-01&to=2026-02-28';
 
 export interface WorkedMonths {
   readonly owner: Person;
+  readonly smith: Person;
   readonly ids: Readonly<
     Record<
       'safe' | 'bench' | 'refiner' | 'customer' | 'refiner_party' | 'sheet' | 'gold' | 'weigh_in' | 'consign',
@@ -24,11 +25,11 @@ export interface WorkedMonths {
 /** Records the two months in a fresh workshop of the server. */
 export async function workTwoMonths(server: TestServer): Promise<WorkedMonths> {
   const owner = await signUp(server);
-  await addMember(server, owner, 'goldsmith', 'Corin Dask');
+  const smith = await addMember(server, owner, 'goldsmith', 'Corin Dask');
   const places = await openPlaces(owner);
   const house = await houseMetal(owner, places);
   const gold = await customersGold(owner, places);
-  return { owner, ids: { ...places, ...house, gold } };
+  return { owner, smith, ids: { ...places, ...house, gold } };
 }
 
 async function openPlaces(owner: Person) {

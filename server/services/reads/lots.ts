@@ -97,12 +97,16 @@ const HOLDINGS = `SELECT h.account_id::text, a.name AS account_name, a.kind AS a
     AND (h.gross_ug <> 0 OR h.gold_ug <> 0 OR h.silver_ug <> 0 OR h.platinum_ug <> 0 OR h.palladium_ug <> 0)
   ORDER BY h.gross_ug DESC`;
 
+const LIES = "(is_place(a.kind) OR a.kind = 'metal_account')";
+
+/** What a voucher brought to places, or took from them where it brought nothing: a loss in the lot's name is no metal there. */
+const moved = (m: string) =>
+  `grams(coalesce(sum(e.${m}_ug) FILTER (WHERE e.${m}_ug > 0 AND ${LIES}), -sum(e.${m}_ug) FILTER (WHERE e.${m}_ug < 0 AND ${LIES}), 0)::bigint) AS ${m}_g`;
 const TRAIL = `SELECT r.id::text AS voucher_id, r.sequence::text, r.kind, r.business_date::text,
     to_char(r.recorded_at AT TIME ZONE 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"') AS recorded_at, p.name AS recorded_by_name,
     string_agg(DISTINCT a.name, ', ') FILTER (WHERE e.gross_ug < 0 OR e.gold_ug < 0) AS from_names,
     string_agg(DISTINCT a.name, ', ') FILTER (WHERE e.gross_ug > 0 OR e.gold_ug > 0) AS to_names, j.code AS job_code,
-    grams(coalesce(sum(e.gross_ug) FILTER (WHERE e.gross_ug > 0), -sum(e.gross_ug))::bigint) AS gross_g,
-    grams(coalesce(sum(e.gold_ug) FILTER (WHERE e.gold_ug > 0), 0)::bigint) AS gold_g,
+    ${moved('gross')}, ${moved('gold')},
     EXISTS (SELECT 1 FROM record v WHERE v.workshop_id = r.workshop_id AND v.reverses = r.id) AS reversed
   FROM entry e JOIN record r ON r.workshop_id = e.workshop_id AND r.sequence = e.voucher_sequence
   JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id
@@ -112,6 +116,12 @@ const TRAIL = `SELECT r.id::text AS voucher_id, r.sequence::text, r.kind, r.busi
   GROUP BY r.workshop_id, r.id, r.sequence, r.kind, r.business_date, r.recorded_at, p.name, j.code
   ORDER BY r.sequence DESC LIMIT 200`;
 
+/** What a lot began with in places, by its first voucher. */
+const began = (m: string) =>
+  `(SELECT grams(coalesce(sum(e.${m}_ug), 0)::bigint) FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id AND ${LIES}
+    WHERE e.workshop_id = current_workshop() AND e.lot_id = f.id AND e.${m}_ug > 0
+      AND e.voucher_sequence = (SELECT min(x.voucher_sequence) FROM entry x WHERE x.workshop_id = current_workshop() AND x.lot_id = f.id)) AS ${m}_g`;
+
 const FAMILY = `WITH RECURSIVE before AS (
     SELECT p.parent_id AS id, -1 AS depth, p.lot_id AS next_id FROM lot_parent p WHERE p.workshop_id = current_workshop() AND p.lot_id = $1::uuid
     UNION SELECT p.parent_id, b.depth - 1, p.lot_id FROM before b JOIN lot_parent p ON p.workshop_id = current_workshop() AND p.lot_id = b.id WHERE b.depth > -6
@@ -120,9 +130,6 @@ const FAMILY = `WITH RECURSIVE before AS (
     UNION SELECT p.lot_id, a.depth + 1, p.parent_id FROM after a JOIN lot_parent p ON p.workshop_id = current_workshop() AND p.parent_id = a.id WHERE a.depth < 6
   )
   SELECT f.id::text, l.code, l.form, l.description, f.depth, f.next_id::text,
-    (SELECT grams(coalesce(sum(e.gross_ug), 0)::bigint) FROM entry e WHERE e.workshop_id = current_workshop() AND e.lot_id = f.id AND e.gross_ug > 0
-      AND e.voucher_sequence = (SELECT min(x.voucher_sequence) FROM entry x WHERE x.workshop_id = current_workshop() AND x.lot_id = f.id)) AS gross_g,
-    (SELECT grams(coalesce(sum(e.gold_ug), 0)::bigint) FROM entry e WHERE e.workshop_id = current_workshop() AND e.lot_id = f.id AND e.gold_ug > 0
-      AND e.voucher_sequence = (SELECT min(x.voucher_sequence) FROM entry x WHERE x.workshop_id = current_workshop() AND x.lot_id = f.id)) AS gold_g
+    ${began('gross')}, ${began('gold')}
   FROM (SELECT * FROM before UNION SELECT * FROM after) f JOIN lot l ON l.workshop_id = current_workshop() AND l.id = f.id
   ORDER BY f.depth, l.code LIMIT 500`;
