@@ -5,14 +5,21 @@ import { ProblemError } from '../problem.ts';
 export function jsonOnly(): RequestHandler {
   return (request, _response, next) => {
     const length = request.get('content-length');
+    const isJson = request.is('application/json') !== false;
     const hasBody =
       request.get('transfer-encoding') !== undefined || (length !== undefined && length !== '0');
-    if (hasBody && !request.is('application/json') && !request.is('multipart/form-data')) {
-      throw new ProblemError('wrong_content_type', 'The request has to be JSON.');
-    }
+    if (hasBody && !(isJson && isUtf8(request.get('content-type'))) && !request.is('multipart/form-data'))
+      throw new ProblemError('wrong_content_type', 'The request has to be JSON in UTF-8.');
+    if (length === '0' && request.get('content-type')?.startsWith('application/json') === true)
+      throw new ProblemError('malformed', 'The request says that it is JSON and carries nothing.');
     next();
   };
 }
+
+const isUtf8 = (type = ''): boolean => {
+  const charset = /charset\s*=\s*"?([^\s;"]+)/i.exec(type)?.[1];
+  return charset === undefined || charset.toLowerCase() === 'utf-8';
+};
 
 /** Deeper than any form of ours by far; what walks a body later may then do so by recursion. */
 const MOST_LAYERS = 20;

@@ -29,7 +29,11 @@ export type LotRow = z.output<typeof lotRow>;
 export const lotPage = z.object({ rows: z.array(lotRow), next_cursor: z.string().nullable() });
 
 export const lotQuery = z.strictObject({
-  cursor: z.string().max(40).optional(),
+  /** The running number of the code to go on below. */
+  cursor: z
+    .string()
+    .regex(/^\d{1,15}$/)
+    .optional(),
   limit: z.coerce.number().int().min(1).max(200).default(50),
   q: z.string().max(60).optional(),
   form: z.enum(LOT_FORMS).optional(),

@@ -86,7 +86,7 @@ describe('an account that is not there', () => {
   it('takes as long as one that is', async () => {
     const slow = await startTestServer({ bcrypt_cost: 10 });
     const owner = await signUp(slow);
-    const times = { there: [] as number[], absent: [] as number[] };
+    const times: Record<'there' | 'absent', number[]> = { there: [], absent: [] };
     for (let n = 0; n < 4; n += 1) {
       for (const [who, email] of [
         ['there', owner.email],

@@ -58,11 +58,18 @@ export async function endRequest(
     by.voucher_id ?? null,
     by.only_of ?? null,
   ]);
-  if (ended === null)
-    throw new ProblemError(
-      'conflict',
-      'That request was answered or withdrawn meanwhile. Look at the list again.',
-    );
+  if (ended !== null) return;
+  const there = await tx.maybe(
+    z.object({ id: z.string() }),
+    'SELECT id::text FROM metal_request WHERE workshop_id = current_workshop() AND id = $1::uuid',
+    [id],
+  );
+  throw there === null
+    ? new ProblemError('not_found', 'There is no such request. Look at the list again.')
+    : new ProblemError(
+        'conflict',
+        'That request was answered or withdrawn meanwhile. Look at the list again.',
+      );
 }
 
 const OWN_PLACE = `SELECT id::text FROM account WHERE workshop_id = current_workshop() AND id = $1::uuid
