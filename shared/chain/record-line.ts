@@ -4,13 +4,18 @@
  * language only.
  */
 import type { Detail } from '../book/draft.ts';
+import { parseGrams } from '../mass/micrograms.ts';
 import { z } from '../schemas/zod.ts';
 import { canonicalJson } from './canonical.ts';
 import type { CanonicalValue } from './canonical.ts';
 
 const leaf = z.string().nullable();
 const hash = z.string().regex(/^[0-9a-f]{64}$/);
-const gramsOfSix = z.string().regex(/^-?\d+\.\d{6}$/);
+/** Six decimals, no zeros before, no minus nothing, within a tonne: one text for each mass. */
+const gramsOfSix = z
+  .string()
+  .regex(/\.\d{6}$/)
+  .refine((text) => parseGrams(text, { signed: true }).ok);
 
 const chainEntry = z.strictObject({
   account_id: z.string(),
@@ -21,7 +26,7 @@ const chainEntry = z.strictObject({
   palladium_g: gramsOfSix,
   pieces: z
     .string()
-    .regex(/^-?\d+$/)
+    .regex(/^(0|-?[1-9]\d{0,17})$/)
     .nullable(),
   platinum_g: gramsOfSix,
   silver_g: gramsOfSix,
@@ -32,14 +37,15 @@ export type ChainEntry = z.output<typeof chainEntry>;
 export const chainRecord = z.strictObject({
   approved_by: leaf,
   business_date: z.iso.date(),
-  detail: z.record(z.string(), z.union([leaf, z.array(z.union([leaf, z.record(z.string(), leaf)]))])),
+  detail: z.record(z.string(), z.union([leaf, z.array(leaf), z.array(z.record(z.string(), leaf))])),
   documents: z.array(z.strictObject({ id: z.string(), sha256: hash })),
   entries: z.array(chainEntry),
   id: z.string(),
   kind: z.string(),
   note: leaf,
   previous_hash: hash,
-  recorded_at: z.string().regex(/^\d{4}-\d\d-\d\dT\d\d:\d\d:\d\d\.\d{3}Z$/),
+  /** UTC with milliseconds, and a moment that is one. */
+  recorded_at: z.iso.datetime({ precision: 3 }),
   recorded_by: z.string(),
   reverses: leaf,
   sequence: z.string().regex(/^[1-9]\d*$/),

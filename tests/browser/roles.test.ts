@@ -96,8 +96,8 @@ describe('the proprietor', () => {
       .first()
       .click();
     await asking.page
+      .getByRole('dialog')
       .getByLabel(/Reason/)
-      .first()
       .fill('Wrong bench.');
     await asking.page
       .getByRole('dialog')

@@ -18,7 +18,6 @@ import { useReconciliation } from '../../queries/reports.ts';
 import { paths } from '../../app/paths.ts';
 import { ReportNav, useAddressFilter } from './nav.tsx';
 import { PlacesTable } from './reconciliation-places.tsx';
-import { kindsOfLine } from './reconciliation-kinds.ts';
 
 export function ReconciliationPage() {
   const day = today();
@@ -133,10 +132,8 @@ function LinesTable({ report, agrees }: { readonly report: ReconciliationJson; r
   );
 }
 
-function lineAddress(report: ReconciliationJson, line: string): string {
-  const kind = kindsOfLine(line);
-  const query = new URLSearchParams({ from: report.from, to: report.to, ...(kind === null ? {} : { kind }) });
-  return `${paths.vouchers}?${query.toString()}`;
+function lineAddress({ from, to, owner }: ReconciliationJson, line: string): string {
+  return `${paths.vouchers}?${new URLSearchParams({ from, to, owner, line }).toString()}`;
 }
 
 interface LineProps {

@@ -88,7 +88,7 @@ function ListTable({ name, rows, nameOf }: ListTableProps) {
     (column) => column !== 'id' && rows.some((row) => row[column] !== null && row[column] !== undefined),
   );
   return (
-    <div className="table-region" role="region" aria-label={words(name)} tabIndex={0}>
+    <div className="table-region" role="region" aria-label={`${words(name)}, row by row`} tabIndex={0}>
       <table className="register">
         <caption className="sr-only">{words(name)}</caption>
         <thead>

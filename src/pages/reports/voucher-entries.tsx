@@ -14,7 +14,7 @@ export function EntriesTable({ entries }: { readonly entries: readonly VoucherEn
   );
   const counted = entries.some((entry) => entry.pieces !== null);
   return (
-    <div className="table-region" role="region" aria-label="Entries" tabIndex={0}>
+    <div className="table-region" role="region" aria-label="Entries of the voucher" tabIndex={0}>
       <table className="register">
         <caption className="sr-only">Entries of the voucher, in grams</caption>
         <thead>

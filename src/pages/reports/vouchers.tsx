@@ -1,6 +1,7 @@
 /** The register of vouchers, newest first, by kind, days, operation, place and whatever a report's figure narrows it to. */
 import { Link } from 'react-router-dom';
 import { VOUCHER_KINDS } from '../../../shared/book/kinds.ts';
+import { RECONCILIATION_LINES, RECONCILIATION_WORDS } from '../../../shared/loss/reconciliation.ts';
 import type { VoucherRow } from '../../../shared/schemas/vouchers.ts';
 import { FineCell } from '../../components/domain/fine-cell.tsx';
 import { Button } from '../../components/ui/button.tsx';
@@ -27,6 +28,8 @@ const ANY = {
   lot_id: '',
   job_id: '',
   person_id: '',
+  line: '',
+  owner: '',
   show: 'vouchers',
 };
 type Filter = Readonly<typeof ANY>;
@@ -124,6 +127,16 @@ function Filters({ filter, set }: FilterProps) {
 /** What the list is narrowed to beside the fields above it, with a way out. */
 function Narrowed({ filter, set }: FilterProps) {
   const by = (['lot_id', 'job_id', 'person_id'] as const).filter((name) => filter[name] !== '');
+  const line = RECONCILIATION_LINES.find((name) => name === filter.line);
+  if (line !== undefined)
+    return (
+      <>
+        <p>Only those behind “{RECONCILIATION_WORDS[line]}” of the reconciliation.</p>
+        <Button kind="quiet" onPress={() => set({ line: '', owner: '' })}>
+          Show the others too
+        </Button>
+      </>
+    );
   if (by.length === 0) return <p>Open one by its number.</p>;
   return (
     <>
