@@ -24,14 +24,11 @@ if (typeof files === 'string') {
   console.error(files);
   process.exit(2);
 }
-const heads = (values.head ?? []).map((text) => ({
-  sequence: text.split(':')[0] ?? '',
-  hash: text.split(':')[1] ?? '',
-}));
-const result = await verifyDossier(files, { key_ids: values.key ?? [], heads }, nodeCrypto);
+const outside = { key_ids: (values.key ?? []).map(readKey), heads: (values.head ?? []).map(readHead) };
+const result = await verifyDossier(files, outside, nodeCrypto);
 for (const { name, verdict, findings } of result.checks) {
   console.log(`${VERDICTS[verdict].padEnd(14)} ${name}`);
-  for (const { sentence } of findings.slice(0, 20)) console.log(`               ${sentence}`);
+  for (const { sentence } of findings) console.log(`               ${sentence}`);
 }
 if (result.head !== null)
   console.log(
@@ -46,4 +43,17 @@ function read(file: string): Uint8Array {
     console.error(`${file} can't be opened.`);
     return process.exit(2);
   }
+}
+
+function readHead(text: string): { sequence: string; hash: string } {
+  const [, sequence, hash] = /^([1-9]\d*):([0-9a-f]{64})$/i.exec(text) ?? [];
+  if (sequence !== undefined && hash !== undefined) return { sequence, hash };
+  console.error(`--head ${text} is no head. Write it as the statement prints it: SEQUENCE:HASH.`);
+  return process.exit(2);
+}
+
+function readKey(text: string): string {
+  if (/^[0-9a-f]{64}$/i.test(text)) return text;
+  console.error(`--key ${text} is no fingerprint. It is 64 hexadecimal digits, as the statement prints it.`);
+  return process.exit(2);
 }

@@ -21,9 +21,11 @@ export function canonicalJson(value: CanonicalValue): string {
   if (value === null) return 'null';
   if (typeof value === 'string') return JSON.stringify(normaliseText(value));
   if (isList(value)) return `[${value.map(canonicalJson).join(',')}]`;
-  const members = Object.keys(value)
+  const named = new Map(Object.entries(value).map(([key, member]) => [normaliseText(key), member]));
+  if (named.size !== Object.keys(value).length) throw new RangeError('two keys are the same text');
+  const members = [...named.keys()]
     .sort()
-    .map((key) => `${JSON.stringify(normaliseText(key))}:${canonicalJson(value[key] ?? null)}`);
+    .map((key) => `${JSON.stringify(key)}:${canonicalJson(named.get(key) ?? null)}`);
   return `{${members.join(',')}}`;
 }
 

@@ -26,6 +26,8 @@ export interface PersonState {
   readonly id: string;
   readonly name: string;
   readonly role: string;
+  /** Last day of the role; null for no end. */
+  readonly until: string | null;
   readonly active: boolean;
 }
 
@@ -82,6 +84,7 @@ export function nextPeople(people: Map<string, PersonState>, record: ChainRecord
       id,
       name: leafOf(record, 'name') ?? '',
       role: leafOf(record, 'role') ?? '',
+      until: leafOf(record, 'until'),
       active: true,
     });
   const known = people.get(id);
@@ -115,6 +118,9 @@ export function holdingsOf(records: readonly ChainRecord[]): readonly HoldingSta
   return [...held.values()];
 }
 
+/** A price as our records write it; what is none can't value anything. */
+const PRICE = /^\d{1,15}(\.\d{1,15})?$/;
+
 /** The newest price of each metal among price_set acts, by date and then by order. */
 export function pricesOf(
   records: readonly ChainRecord[],
@@ -122,9 +128,10 @@ export function pricesOf(
   const newest = new Map<string, { per_ozt: string; priced_on: string; currency: string }>();
   for (const record of records) {
     const metal = leafOf(record, 'metal');
-    if (record.kind !== 'price_set' || metal === null) continue;
+    const per_ozt = leafOf(record, 'price_per_ozt') ?? '';
+    if (record.kind !== 'price_set' || metal === null || !PRICE.test(per_ozt)) continue;
     const price = {
-      per_ozt: leafOf(record, 'price_per_ozt') ?? '0',
+      per_ozt,
       priced_on: leafOf(record, 'priced_on') ?? '',
       currency: leafOf(record, 'currency') ?? '',
     };

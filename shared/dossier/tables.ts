@@ -32,6 +32,9 @@ export function tablesOf(chain: readonly HashedRecord[]): readonly Table[] {
   ];
 }
 
+/** By code units, so that the order is the same in every language of a reader's computer. */
+const inOrder = (a: string, b: string): number => (a === b ? 0 : a < b ? -1 : 1);
+
 const records = (chain: readonly HashedRecord[]) => chain.map(({ record }) => record);
 
 function accounts(chain: readonly HashedRecord[]): Table {
@@ -143,7 +146,7 @@ function holdings(chain: readonly HashedRecord[]): Table {
   });
   const rows = holdingsOf(records(chain))
     .filter(({ mass, pieces }) => !isZeroMass(mass) || (pieces ?? 0n) !== 0n)
-    .sort((a, b) => a.account_id.localeCompare(b.account_id) || a.lot_id.localeCompare(b.lot_id))
+    .sort((a, b) => inOrder(a.account_id, b.account_id) || inOrder(a.lot_id, b.lot_id))
     .map(({ account_id, lot_id, mass, pieces }) => {
       const json = massToJson(mass);
       return [

@@ -8,24 +8,27 @@ const PATH = /^[a-z0-9][a-z0-9._-]*(\/[a-z0-9][a-z0-9._-]*)?$/i;
 
 /** The files of an archive by path, or a sentence why it is not unpacked. */
 export function unzipDossier(zip: Uint8Array): ReadonlyMap<string, Uint8Array> | string {
+  const names = new Set<string>();
   let files = 0;
   let total = 0;
-  let refused: string | null = null;
+  const refusals: string[] = [];
   try {
     const unpacked = unzipSync(zip, {
-      filter({ name, originalSize, size }) {
+      filter({ name, originalSize }) {
         files += 1;
         total += originalSize;
         if (!PATH.test(name) || /\.(zip|gz|tar|7z)$/i.test(name))
-          refused ??= `${name.slice(0, 80)} is no file of a dossier.`;
+          refusals.push(`${name.slice(0, 80)} is no file of a dossier.`);
+        if (names.has(name)) refusals.push(`${name.slice(0, 80)} stands in the archive twice.`);
+        names.add(name);
         if (files > MOST_FILES || total > MOST_BYTES)
-          refused ??= 'The archive holds more than a dossier can.';
-        if (originalSize > 10_000_000 && originalSize > size * MOST_RATIO)
-          refused ??= `${name} swells far beyond its size.`;
-        return refused === null;
+          refusals.push('The archive holds more than a dossier can.');
+        if (total > 10_000_000 && total > zip.length * MOST_RATIO)
+          refusals.push('The archive swells far beyond its size.');
+        return refusals.length === 0;
       },
     });
-    return refused ?? new Map(Object.entries(unpacked));
+    return refusals[0] ?? new Map(Object.entries(unpacked));
   } catch {
     return 'The archive can’t be read. It is no ZIP file, or it was damaged.';
   }

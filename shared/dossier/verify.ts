@@ -6,6 +6,7 @@ import { closedPeriods, reversals, timeRunsOn } from './checks/rules.ts';
 import { listedFiles, tablesAgree } from './checks/files.ts';
 import { neverBelow, zeroSums } from './checks/balances.ts';
 import { readChain } from './checks/chain.ts';
+import { namedHeads, registersStand } from './checks/registers.ts';
 import { signatures } from './checks/signatures.ts';
 import type { Check, Finding } from './finding.ts';
 import { checkOf } from './finding.ts';
@@ -72,6 +73,12 @@ export async function verifyDossier(
     ),
     checkOf('chain', 'Every record carries the hash of the one before it, without a gap', findings),
     checkOf('head', 'The manifest names the head that the chain ends at', headFindings(manifest, head)),
+    checkOf('named_heads', 'Every dossier that the book names ended where it says', namedHeads(chain)),
+    checkOf(
+      'registers',
+      'Every account and lot is opened once, and before it is used',
+      registersStand(records),
+    ),
     checkOf('sums', 'Every voucher sums to nothing in all five masses', zeroSums(records)),
     checkOf('places', 'No place ever held less than nothing of a lot', neverBelow(records)),
     checkOf('reversals', 'Every reversal is the exact mirror of a voucher, once', reversals(records)),
@@ -100,7 +107,9 @@ function readManifest(files: ReadonlyMap<string, Uint8Array>): Manifest | null {
 
 function decode(bytes: Uint8Array | undefined): string | null {
   try {
-    return bytes === undefined ? null : new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+    return bytes === undefined
+      ? null
+      : new TextDecoder('utf-8', { fatal: true, ignoreBOM: true }).decode(bytes);
   } catch {
     return null;
   }

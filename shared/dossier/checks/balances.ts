@@ -34,14 +34,7 @@ export function neverBelow(records: readonly ChainRecord[]): readonly Finding[] 
     const touched = new Set<string>();
     for (const entry of record.entries) {
       const account = accounts.get(entry.account_id);
-      if (account === undefined) {
-        findings.push({
-          at: record.sequence,
-          sentence: `Voucher ${record.sequence} names an account that was never opened.`,
-        });
-        continue;
-      }
-      if (!isPlace(account.kind)) continue;
+      if (account === undefined || !isPlace(account.kind)) continue;
       const key = `${entry.account_id} ${entry.lot_id}`;
       const known = held.get(key) ?? { mass: ZERO_MASS, pieces: 0n };
       held.set(key, {
