@@ -1,4 +1,5 @@
 /** Vouchers and acts as the server shows them: a line of a list, and one whole, with what proves it. */
+import { RECONCILIATION_LINES } from '../loss/reconciliation.ts';
 import { massFieldsOut } from './primitives.ts';
 import { recordKind } from './book.ts';
 import { z } from './zod.ts';
@@ -79,6 +80,9 @@ export const voucherQuery = z.strictObject({
   job_id: z.uuid().optional(),
   person_id: z.uuid().optional(),
   operation: choice,
+  /** The vouchers behind a figure of a reconciliation: its line, and whose metal. */
+  line: z.enum(RECONCILIATION_LINES).optional(),
+  owner: z.union([z.literal('house'), z.literal('all'), z.uuid()]).default('all'),
   format: z.enum(['json', 'csv']).default('json'),
 });
 export type VoucherQuery = z.output<typeof voucherQuery>;

@@ -75,6 +75,11 @@ describe('after a closed month was corrected', () => {
     ]);
   });
 
+  it('the line opens the corrections, and no other voucher of the days', async () => {
+    const { rows } = voucherPage.parse(await get(`/vouchers?${since}&line=corrections&owner=house`));
+    expect(rows.map((row) => row.kind)).toEqual(['correction', 'correction']);
+  });
+
   it('the loss that was corrected is shown apart, under the operation of the first voucher', async () => {
     const [row] = await losses(`by=operation&${since}`);
     expect([

@@ -4,6 +4,7 @@
  */
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { balancesJson, lossesJson, reconciliationJson } from '../../shared/schemas/reports.ts';
+import { voucherPage } from '../../shared/schemas/vouchers.ts';
 import { readCsv } from '../../shared/dossier/csv.ts';
 import type { TestServer } from '../support/server.ts';
 import { addMember, signUp, startTestServer } from '../support/server.ts';
@@ -199,6 +200,22 @@ describe('reconciliation', () => {
       'Pell van gold 0.000000 0.231750 0.231750 0.000000 0.000000',
       'Osk & Varley, works gold 0.000000 0.231745 0.231745 0.000000 0.000000',
     ]);
+  });
+
+  it.each([
+    ['swept_up', 'house', ['outturn', 'sweep_up']],
+    ['count_variance', 'house', ['arrive']],
+    ['handed_over', 'house', ['outturn']],
+    ['deductions', 'house', ['outturn']],
+    ['foreign_matter', 'house', ['outturn', 'sweep_up']],
+    ['working_loss', 'house', []],
+    ['working_loss', 'all', ['weigh_back']],
+    ['from_customers', 'customer', ['weigh_in']],
+    ['to_customers', 'customer', ['return_to_owner']],
+  ])('the figure “%s” of %s opens exactly its vouchers', async (line, whose, expected) => {
+    const owner = whose === 'customer' ? months.ids.customer : whose;
+    const { body } = await months.owner.get(`/vouchers?${FEBRUARY}&line=${line}&owner=${owner}`);
+    expect(voucherPage.parse(body).rows.map((row) => row.kind)).toEqual(expected);
   });
 
   it('of a customer: brought, lost in work, given back, still here', async () => {

@@ -4,6 +4,7 @@ import { voucherEntry, voucherRow, voucherWhole } from '../../../shared/schemas/
 import { z } from '../../../shared/schemas/zod.ts';
 import type { Tx } from '../../db/rows.ts';
 import { ProblemError } from '../../problem.ts';
+import { FIRST, SIDE, VOUCHER_KIND, because, keysOfLine, ownedBy } from '../reports/reconciliation-line.ts';
 
 const moved = (metal: string) =>
   `(SELECT grams(coalesce(sum(e.${metal}_ug) FILTER (WHERE e.${metal}_ug > 0), 0)::bigint) FROM entry e
@@ -43,6 +44,8 @@ export async function voucherList(
       query.person_id ?? null,
       query.operation ?? null,
       query.limit + 1,
+      query.line === undefined ? null : keysOfLine(query.line),
+      query.owner,
     ],
   );
   const page = rows.slice(0, query.limit);
@@ -55,7 +58,11 @@ const FILTER = `AND ($1::bigint IS NULL OR r.sequence < $1::bigint) AND ($2::tex
   AND ($6::uuid IS NULL OR EXISTS (SELECT 1 FROM entry e WHERE e.workshop_id = r.workshop_id AND e.voucher_sequence = r.sequence AND e.account_id = $6::uuid))
   AND ($7::uuid IS NULL OR EXISTS (SELECT 1 FROM entry e WHERE e.workshop_id = r.workshop_id AND e.voucher_sequence = r.sequence AND e.lot_id = $7::uuid))
   AND ($8::uuid IS NULL OR r.job_id = $8::uuid) AND ($9::uuid IS NULL OR r.person_id = $9::uuid OR r.recorded_by = $9::uuid)
-  AND ($10::text IS NULL OR r.operation = $10)`;
+  AND ($10::text IS NULL OR r.operation = $10)
+  AND ($12::text[] IS NULL OR EXISTS (SELECT 1 FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id
+    JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id ${FIRST}
+    WHERE e.workshop_id = r.workshop_id AND e.voucher_sequence = r.sequence AND ${ownedBy('$13::text')}
+      AND concat_ws('|', a.kind, ${VOUCHER_KIND}, ${SIDE}, ${because('$4::date')}) = ANY ($12::text[])))`;
 
 const head = voucherWhole.omit({ documents: true, entries: true, handovers: true });
 const documentRow = z.object({ id: z.string(), sha256: z.string(), name: z.string().nullable() });

@@ -8,6 +8,7 @@ import type { ReconciliationJson, ReconciliationQuery } from '../../../shared/sc
 import { reconciliationJson } from '../../../shared/schemas/reports.ts';
 import { z } from '../../../shared/schemas/zod.ts';
 import type { Tx } from '../../db/rows.ts';
+import { FIRST, SIDE, VOUCHER_KIND, because, ownedBy } from './reconciliation-line.ts';
 
 const METALS = ['gold', 'silver', 'platinum', 'palladium'] as const;
 const MASSES = ['gross', ...METALS] as const;
@@ -44,7 +45,7 @@ export async function readReconciliation(tx: Tx, query: ReconciliationQuery): Pr
   };
 }
 
-const OWNED = `($3::text = 'all' OR ($3::text = 'house' AND l.owner_id IS NULL) OR l.owner_id::text = $3::text)`;
+const OWNED = ownedBy('$3::text');
 const FROM = `FROM entry e JOIN account a ON a.workshop_id = e.workshop_id AND a.id = e.account_id
   JOIN lot l ON l.workshop_id = e.workshop_id AND l.id = e.lot_id
   WHERE e.workshop_id = current_workshop() AND ${OWNED}`;
@@ -55,18 +56,9 @@ const placesAt = (day: string) => `SELECT ${grams('b')} FROM balances_at(${day})
   JOIN lot l ON l.workshop_id = b.workshop_id AND l.id = b.lot_id
   WHERE ${OWNED} AND $1::date IS NOT NULL AND $2::date IS NOT NULL`;
 
-/** A voucher that mends one of a period that was closed when it was recorded is told apart; so is a change of owner. */
-const SUMS = `SELECT a.kind AS account_kind, coalesce(first.kind, r.kind) AS voucher_kind, CASE WHEN e.gross_ug < 0 THEN 'from' ELSE 'onto' END AS side,
-    CASE WHEN coalesce(first.kind, r.kind) = 'ownership' THEN 'change_of_owner'
-      WHEN first.business_date < $1::date AND EXISTS (SELECT 1 FROM period p WHERE p.workshop_id = r.workshop_id AND p.closed
-        AND first.business_date BETWEEN p.first_day AND p.last_day) THEN 'closed_period'
-      ELSE 'ordinary' END AS because, ${grams('e')}
-  ${FROM.replace(
-    'WHERE',
-    `JOIN record r ON r.workshop_id = e.workshop_id AND r.sequence = e.voucher_sequence
-  LEFT JOIN record first ON first.workshop_id = r.workshop_id AND first.id = coalesce(r.reverses, nullif(r.detail->>'corrects', '')::uuid)
-  WHERE`,
-  )} AND e.business_date BETWEEN $1::date AND $2::date GROUP BY 1, 2, 3, 4`;
+const SUMS = `SELECT a.kind AS account_kind, ${VOUCHER_KIND} AS voucher_kind, ${SIDE} AS side, ${because('$1::date')} AS because, ${grams('e')}
+  ${FROM.replace('WHERE', `JOIN record r ON r.workshop_id = e.workshop_id AND r.sequence = e.voucher_sequence ${FIRST} WHERE`)}
+    AND e.business_date BETWEEN $1::date AND $2::date GROUP BY 1, 2, 3, 4`;
 
 const byMetal = (alias: string) =>
   `CROSS JOIN LATERAL (VALUES ${METALS.map((m) => `('${m}', ${alias}.${m}_ug)`).join(', ')}) AS m(metal, ug)`;
