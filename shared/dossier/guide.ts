@@ -35,6 +35,16 @@ the record account_opened. A place (safe, bench, station, bin, outworker, approv
 than nothing of a lot, after any record and at the end of any business_date. A reversal is the exact mirror of the voucher
 that it names in reverses, once. No record enters a period between period_closed and period_reopened.
 
+An account is opened once and a lot described once (account_opened, lot_described), each before a voucher names it. A
+record dossier_made names the sequence and hash at which an earlier dossier ended; that record must have that hash.
+
+## Who signed
+
+role_given and role_ended say who held which role (proprietor, keeper, goldsmith, auditor) and to which last day. Whoever
+recorded or approved a record must have held one then. reversal, write_off, count, reassay, period_closed,
+period_reopened and a correction (but for one with handover_id, weighed before both) carry approved_by, of somebody else
+than recorded_by, unless detail.single_handed is "yes": then one person alone was there to sign.
+
 In the CSV files a text cell that begins with a quote mark, =, +, -, @, tab or carriage return has one more ' in front.
 
 ## What no export can show
