@@ -41,7 +41,7 @@ export function IndexPlate({
   const limits = both ? [-limit, limit] : [limit];
   const named = x(limit);
   return (
-    <svg className="index-plate" viewBox={`0 0 ${WIDTH} 64`} role="img" aria-label={finding}>
+    <svg className="index-plate" viewBox={`0 -8 ${WIDTH} 74`} role="img" aria-label={finding}>
       {band(from, to, ground('beyond'))}
       {band(both ? -limit : from, limit, 'var(--leaf)')}
       {band(both ? -limit : from, limit, 'var(--zone)')}

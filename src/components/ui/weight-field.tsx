@@ -1,7 +1,10 @@
 /**
  * A weight or another figure with its unit. What is typed stays as typed and is set right on leaving: a comma becomes
- * a point, blanks and a pasted unit go. The wheel and the arrow keys never change it, since it is a field of text.
+ * a point, blanks and a pasted unit go; a weight that can't be read is told beside the field at once. The wheel and
+ * the arrow keys never change it, since it is a field of text.
  */
+import { useState } from 'react';
+import { readTypedMass } from '../../../shared/mass/typed-mass.ts';
 import { setFigureRight, setMassRight } from '../../forms/set-right.ts';
 import { Field } from './field.tsx';
 import type { FieldProps } from './field.tsx';
@@ -16,12 +19,16 @@ interface WeightFieldProps extends FieldProps {
 }
 
 export function WeightField({ value, onChange, unit = 'g', fixed = false, ...field }: WeightFieldProps) {
+  const [left, setLeft] = useState(false);
+  const read = unit === 'g' && value.trim() !== '' ? readTypedMass(value) : null;
+  const unread = left && read?.ok === false ? read.reason : null;
   const setRight = () => {
+    setLeft(true);
     const right = unit === 'g' ? setMassRight(value) : setFigureRight(value);
     if (right !== value) onChange(right);
   };
   return (
-    <Field {...field} figure>
+    <Field {...field} error={field.error ?? unread} figure>
       {(attributes) => (
         <>
           {value === '' || fixed || unit !== 'g' ? null : (
@@ -38,7 +45,10 @@ export function WeightField({ value, onChange, unit = 'g', fixed = false, ...fie
             placeholder="none yet"
             value={value}
             readOnly={fixed}
-            onChange={(event) => onChange(event.target.value)}
+            onChange={(event) => {
+              setLeft(false);
+              onChange(event.target.value);
+            }}
             onBlur={setRight}
           />
           <span className="unit">{unit}</span>

@@ -1,13 +1,16 @@
 /** Issuing metal to a bench, station or outworker, for a job; the receiver acknowledges it afterwards. */
 import { useSearchParams } from 'react-router-dom';
 import { PIECE_FORMS } from '../../../shared/book/lot.ts';
+import type { Facts } from '../../../shared/book/facts.ts';
 import { heldOf } from '../../../shared/book/holding.ts';
+import type { AccountRow, JobRow } from '../../../shared/schemas/registers.ts';
 import { DraftPreview, namesOf } from '../../components/domain/draft-preview.tsx';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
 import { Figure, LabelledFigure } from '../../components/ui/figure.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
 import { SelectField } from '../../components/ui/select-field.tsx';
 import { orNull } from '../../forms/typed.ts';
+import type { EventForm } from '../../forms/use-event-form.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { ugFigure } from '../../lib/formats.ts';
 import { useFacts } from '../../queries/facts.ts';
@@ -84,49 +87,7 @@ export function Issue() {
           notes={<p>The receiver acknowledges it; until then whoever issues it answers for it.</p>}
         >
           <ErrorSummary errors={form.errors} shown={form.tried} />
-          <div className="fields">
-            <SelectField
-              label="From"
-              none="Choose a safe"
-              value={values.from_id}
-              onChange={(from_id) => set({ from_id })}
-              options={placeOptions(accounts, ['safe'])}
-              error={errorOf('from_id')}
-            />
-            <SelectField
-              label="Lot"
-              none="Choose a lot"
-              value={values.lot_id}
-              onChange={(lot_id) => set({ lot_id })}
-              options={lotOptions(facts, values.from_id)}
-              error={errorOf('lot_id')}
-            />
-            <SelectField
-              label="To"
-              none="Choose who takes it"
-              value={values.to_id}
-              onChange={(to_id) => set({ to_id })}
-              options={placeOptions(accounts, ['bench', 'station', 'outworker'])}
-              error={errorOf('to_id')}
-            />
-            <SelectField
-              label="Operation"
-              value={values.operation}
-              onChange={(operation) => set({ operation })}
-              options={accounts
-                .filter((account) => account.operation !== null)
-                .map((account) => ({ value: account.operation ?? '', label: account.name }))}
-              error={errorOf('operation')}
-            />
-            <SelectField
-              label="Job"
-              none="None: stock work or repairs"
-              value={values.job_id}
-              onChange={(job_id) => set({ job_id })}
-              options={jobs.map(({ id, code, title }) => ({ value: id, label: `${code} ${title}` }))}
-              error={errorOf('job_id')}
-            />
-          </div>
+          <IssueFields form={form} facts={facts} accounts={accounts} jobs={jobs} />
           <div className="mt-5">
             <AmountFields
               value={values.amount}
@@ -163,5 +124,61 @@ export function Issue() {
       </Page>
       <PostBar form={form} act="Post the issue" />
     </>
+  );
+}
+
+interface IssueFieldsProps {
+  readonly form: EventForm<IssueValues>;
+  readonly facts: Facts;
+  readonly accounts: readonly AccountRow[];
+  readonly jobs: readonly JobRow[];
+}
+
+/** From where, what, to whom, for what. */
+function IssueFields({ form: { values, set, errorOf }, facts, accounts, jobs }: IssueFieldsProps) {
+  return (
+    <div className="fields">
+      <SelectField
+        label="From"
+        none="Choose a safe"
+        value={values.from_id}
+        onChange={(from_id) => set({ from_id })}
+        options={placeOptions(accounts, ['safe'])}
+        error={errorOf('from_id')}
+      />
+      <SelectField
+        label="Lot"
+        none="Choose a lot"
+        value={values.lot_id}
+        onChange={(lot_id) => set({ lot_id })}
+        options={lotOptions(facts, values.from_id)}
+        error={errorOf('lot_id')}
+      />
+      <SelectField
+        label="To"
+        none="Choose who takes it"
+        value={values.to_id}
+        onChange={(to_id) => set({ to_id })}
+        options={placeOptions(accounts, ['bench', 'station', 'outworker'])}
+        error={errorOf('to_id')}
+      />
+      <SelectField
+        label="Operation"
+        value={values.operation}
+        onChange={(operation) => set({ operation })}
+        options={accounts
+          .filter((account) => account.operation !== null)
+          .map((account) => ({ value: account.operation ?? '', label: account.name }))}
+        error={errorOf('operation')}
+      />
+      <SelectField
+        label="Job"
+        none="None: stock work or repairs"
+        value={values.job_id}
+        onChange={(job_id) => set({ job_id })}
+        options={jobs.map(({ id, code, title }) => ({ value: id, label: `${code} ${title}` }))}
+        error={errorOf('job_id')}
+      />
+    </div>
   );
 }

@@ -1,10 +1,12 @@
 /** One of the acts that take lots from a place: where from, which lots and how much, where to; previewed and posted. */
 import { useParams } from 'react-router-dom';
+import type { AccountRow } from '../../../shared/schemas/registers.ts';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
 import { SelectField } from '../../components/ui/select-field.tsx';
 import { TextField } from '../../components/ui/text-field.tsx';
 import { DraftPreview, namesOf } from '../../components/domain/draft-preview.tsx';
+import type { EventForm } from '../../forms/use-event-form.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { useFacts } from '../../queries/facts.ts';
 import { useAccounts, useJobs, useParties } from '../../queries/registers.ts';
@@ -25,8 +27,6 @@ export function Move() {
 
 function MoveForm({ name, move }: { readonly name: string; readonly move: MoveDefinition }) {
   const accounts = useAccounts();
-  const parties = useParties();
-  const jobs = useJobs();
   const posted = usePosted();
   const form = useEventForm<MoveValues>({
     event: move.event,
@@ -46,93 +46,13 @@ function MoveForm({ name, move }: { readonly name: string; readonly move: MoveDe
     onPosted: posted,
   });
   const { values, set, errorOf } = form;
-  const from = move.from.includes('safe') && values.choice === 'back_from_approval' ? move.from : move.from;
   const facts = useFacts({ place_ids: placesToRead(values, accounts) });
-  const operations = accounts.filter((account) => account.operation !== null);
-  const shown = parties.filter((party) =>
-    move.party === 'customer'
-      ? party.kind === 'customer'
-      : party.kind === 'customer' || party.kind === 'supplier',
-  );
   return (
     <>
       <Page title={move.title} lede={move.words} margin="Counter">
         <Section heading="What moves">
           <ErrorSummary errors={form.errors} shown={form.tried} />
-          <div className="fields">
-            <SelectField
-              label={
-                values.choice === 'back_from_approval' || values.choice === 'returned'
-                  ? 'Comes back to'
-                  : 'From'
-              }
-              none="Choose a place"
-              value={values.from_id}
-              onChange={(from_id) => set({ from_id, lots: [] })}
-              options={placeOptions(accounts, from)}
-              error={errorOf('from_id') ?? errorOf('place_id')}
-            />
-            {move.to.length === 0 ? null : (
-              <SelectField
-                label="To"
-                none="Choose a place"
-                value={values.to_id}
-                onChange={(to_id) => set({ to_id })}
-                options={placeOptions(accounts, move.to)}
-                error={errorOf('to_id')}
-              />
-            )}
-            {move.party === null ? null : (
-              <SelectField
-                label={move.party === 'customer' ? 'Customer' : 'New owner'}
-                none={move.party === 'customer' ? 'Choose a customer' : 'The house'}
-                value={values.party_id}
-                onChange={(party_id) => set({ party_id })}
-                options={shown.map(({ id, name: label }) => ({ value: id, label }))}
-                error={errorOf('party_id') ?? errorOf('new_owner_id')}
-              />
-            )}
-            {move.choice === null ? null : (
-              <SelectField
-                label={move.choice.label}
-                value={values.choice}
-                onChange={(choice) => set({ choice, lots: [] })}
-                options={move.choice.options}
-                error={errorOf('what_for') ?? errorOf('cause')}
-              />
-            )}
-            <SelectField
-              label="Job"
-              hint="Where it lies at a bench for a job."
-              none="None: stock work"
-              value={values.job_id}
-              onChange={(job_id) => set({ job_id })}
-              options={jobs.map(({ id, code, title }) => ({ value: id, label: `${code} ${title}` }))}
-              error={errorOf('job_id')}
-            />
-            {move.event === 'transfer' ? (
-              <SelectField
-                label="Operation"
-                hint="Where work is handed on."
-                none="None"
-                value={values.operation}
-                onChange={(operation) => set({ operation })}
-                options={operations.map((account) => ({
-                  value: account.operation ?? '',
-                  label: account.name,
-                }))}
-                error={errorOf('operation')}
-              />
-            ) : null}
-            {move.reference === null ? null : (
-              <TextField
-                label={move.reference}
-                value={values.reference}
-                onChange={(reference) => set({ reference })}
-                error={errorOf('reference') ?? errorOf('what_for')}
-              />
-            )}
-          </div>
+          <MoveFields form={form} move={move} accounts={accounts} />
           <LotLines
             facts={facts}
             place_id={lotsAt(values, accounts)}
@@ -161,6 +81,112 @@ function MoveForm({ name, move }: { readonly name: string; readonly move: MoveDe
         </Section>
       </Page>
       <PostBar form={form} act={move.act} />
+    </>
+  );
+}
+
+interface MoveFieldsProps {
+  readonly form: EventForm<MoveValues>;
+  readonly move: MoveDefinition;
+  readonly accounts: readonly AccountRow[];
+}
+
+/** Where from, where to, whose, what for: as much of it as the act asks. */
+function MoveFields({ form, move, accounts }: MoveFieldsProps) {
+  const { values, set, errorOf } = form;
+  return (
+    <div className="fields">
+      <SelectField
+        label={
+          values.choice === 'back_from_approval' || values.choice === 'returned' ? 'Comes back to' : 'From'
+        }
+        none="Choose a place"
+        value={values.from_id}
+        onChange={(from_id) => set({ from_id, lots: [] })}
+        options={placeOptions(accounts, move.from)}
+        error={errorOf('from_id') ?? errorOf('place_id')}
+      />
+      {move.to.length === 0 ? null : (
+        <SelectField
+          label="To"
+          none="Choose a place"
+          value={values.to_id}
+          onChange={(to_id) => set({ to_id })}
+          options={placeOptions(accounts, move.to)}
+          error={errorOf('to_id')}
+        />
+      )}
+      <MoveParty form={form} move={move} />
+      <MoveReasons form={form} move={move} accounts={accounts} />
+    </div>
+  );
+}
+
+function MoveParty({ form: { values, set, errorOf }, move }: Pick<MoveFieldsProps, 'form' | 'move'>) {
+  const parties = useParties();
+  if (move.party === null) return null;
+  const shown = parties.filter((party) =>
+    move.party === 'customer'
+      ? party.kind === 'customer'
+      : party.kind === 'customer' || party.kind === 'supplier',
+  );
+  return (
+    <SelectField
+      label={move.party === 'customer' ? 'Customer' : 'New owner'}
+      none={move.party === 'customer' ? 'Choose a customer' : 'The house'}
+      value={values.party_id}
+      onChange={(party_id) => set({ party_id })}
+      options={shown.map(({ id, name: label }) => ({ value: id, label }))}
+      error={errorOf('party_id') ?? errorOf('new_owner_id')}
+    />
+  );
+}
+
+function MoveReasons({ form: { values, set, errorOf }, move, accounts }: MoveFieldsProps) {
+  const jobs = useJobs();
+  const operations = accounts.filter((account) => account.operation !== null);
+  return (
+    <>
+      {move.choice === null ? null : (
+        <SelectField
+          label={move.choice.label}
+          value={values.choice}
+          onChange={(choice) => set({ choice, lots: [] })}
+          options={move.choice.options}
+          error={errorOf('what_for') ?? errorOf('cause')}
+        />
+      )}
+      <SelectField
+        label="Job"
+        hint="Where it lies at a bench for a job."
+        none="None: stock work"
+        value={values.job_id}
+        onChange={(job_id) => set({ job_id })}
+        options={jobs.map(({ id, code, title }) => ({ value: id, label: `${code} ${title}` }))}
+        error={errorOf('job_id')}
+      />
+      {move.event === 'transfer' ? (
+        <SelectField
+          label="Operation"
+          hint="Where work is handed on."
+          none="None"
+          value={values.operation}
+          onChange={(operation) => set({ operation })}
+          options={operations.map((account) => ({
+            value: account.operation ?? '',
+            label: account.name,
+          }))}
+          error={errorOf('operation')}
+        />
+      ) : null}
+      {move.reference === null ? null : (
+        <TextField
+          label={move.reference}
+          value={values.reference}
+          onChange={(reference) => set({ reference })}
+          error={errorOf('reference') ?? errorOf('what_for')}
+        />
+      )}
     </>
   );
 }

@@ -1,11 +1,14 @@
 /** Weighing back a bench: its job at the left as it went out, what came back at the right, the loss and its allowance. */
 import { useSearchParams } from 'react-router-dom';
 import type { VoucherDraft } from '../../../shared/book/draft.ts';
+import type { Facts } from '../../../shared/book/facts.ts';
+import type { AccountRow } from '../../../shared/schemas/registers.ts';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
 import { SelectField } from '../../components/ui/select-field.tsx';
 import { TextField } from '../../components/ui/text-field.tsx';
 import { orNull } from '../../forms/typed.ts';
+import type { EventForm } from '../../forms/use-event-form.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { useFacts } from '../../queries/facts.ts';
 import { useAccounts } from '../../queries/registers.ts';
@@ -60,7 +63,6 @@ export function WeighBack() {
   });
   const { values, set, errorOf } = form;
   const facts = useFacts({ place_ids: values.place_id === '' ? [] : [values.place_id] });
-  const jobs = [...new Set(facts.job_holdings.filter((row) => row.mass.gross > 0n).map((row) => row.job_id))];
   const out = outOf(facts, values.place_id, values.job === '' ? null : values.job);
   const voucher =
     form.records?.findLast((record): record is VoucherDraft => record.kind === 'weigh_back') ?? null;
@@ -69,53 +71,7 @@ export function WeighBack() {
       <Page title="Weigh back" lede="Job by job; the loss is booked as it is." margin="Counter">
         <Section heading="Bench and job">
           <ErrorSummary errors={form.errors} shown={form.tried} />
-          <div className="fields">
-            <SelectField
-              label="Bench, station or outworker"
-              none="Choose who weighs back"
-              value={values.place_id}
-              onChange={(place_id) => set({ place_id, job: '', lines: [] })}
-              options={placeOptions(accounts, ['bench', 'station', 'outworker'])}
-              error={errorOf('place_id')}
-            />
-            <SelectField
-              label="Job"
-              none={
-                values.place_id === ''
-                  ? 'Choose the bench first'
-                  : jobs.length === 0
-                    ? 'It holds nothing'
-                    : 'Choose a job'
-              }
-              value={values.job}
-              onChange={(job) => set({ job, lines: [] })}
-              options={jobs.map((job) => ({
-                value: job ?? 'none',
-                label:
-                  job === null
-                    ? 'Stock work'
-                    : `${facts.jobs.get(job)?.code ?? ''} ${facts.jobs.get(job)?.title ?? ''}`,
-              }))}
-              error={errorOf('works.0.job_id')}
-            />
-            <SelectField
-              label="Operation"
-              value={values.operation}
-              onChange={(operation) => set({ operation })}
-              options={accounts
-                .filter((account) => account.operation !== null)
-                .map((account) => ({ value: account.operation ?? '', label: account.name }))}
-              error={errorOf('works.0.operation')}
-            />
-            <SelectField
-              label="Comes back into"
-              none="Choose a safe"
-              value={values.safe_id}
-              onChange={(safe_id) => set({ safe_id })}
-              options={placeOptions(accounts, ['safe'])}
-              error={errorOf('safe_id')}
-            />
-          </div>
+          <WeighBackFields form={form} facts={facts} accounts={accounts} />
         </Section>
         {values.job === '' ? null : (
           <Section
@@ -167,5 +123,65 @@ export function WeighBack() {
       </Page>
       <PostBar form={form} act="Post the weigh-back" />
     </>
+  );
+}
+
+interface WeighBackFieldsProps {
+  readonly form: EventForm<WeighBackValues>;
+  readonly facts: Facts;
+  readonly accounts: readonly AccountRow[];
+}
+
+/** Whose metal comes back, from which job and operation, and where it goes. */
+function WeighBackFields({ form: { values, set, errorOf }, facts, accounts }: WeighBackFieldsProps) {
+  const jobs = [...new Set(facts.job_holdings.filter((row) => row.mass.gross > 0n).map((row) => row.job_id))];
+  return (
+    <div className="fields">
+      <SelectField
+        label="Bench, station or outworker"
+        none="Choose who weighs back"
+        value={values.place_id}
+        onChange={(place_id) => set({ place_id, job: '', lines: [] })}
+        options={placeOptions(accounts, ['bench', 'station', 'outworker'])}
+        error={errorOf('place_id')}
+      />
+      <SelectField
+        label="Job"
+        none={
+          values.place_id === ''
+            ? 'Choose the bench first'
+            : jobs.length === 0
+              ? 'It holds nothing'
+              : 'Choose a job'
+        }
+        value={values.job}
+        onChange={(job) => set({ job, lines: [] })}
+        options={jobs.map((job) => ({
+          value: job ?? 'none',
+          label:
+            job === null
+              ? 'Stock work'
+              : `${facts.jobs.get(job)?.code ?? ''} ${facts.jobs.get(job)?.title ?? ''}`,
+        }))}
+        error={errorOf('works.0.job_id')}
+      />
+      <SelectField
+        label="Operation"
+        value={values.operation}
+        onChange={(operation) => set({ operation })}
+        options={accounts
+          .filter((account) => account.operation !== null)
+          .map((account) => ({ value: account.operation ?? '', label: account.name }))}
+        error={errorOf('works.0.operation')}
+      />
+      <SelectField
+        label="Comes back into"
+        none="Choose a safe"
+        value={values.safe_id}
+        onChange={(safe_id) => set({ safe_id })}
+        options={placeOptions(accounts, ['safe'])}
+        error={errorOf('safe_id')}
+      />
+    </div>
   );
 }

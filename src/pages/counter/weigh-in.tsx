@@ -1,11 +1,8 @@
 /** Weighing in a delivery: line by line at the balance, beside what the invoice says; a difference asks for a decision. */
 import { useState } from 'react';
 import { DraftPreview, namesOf } from '../../components/domain/draft-preview.tsx';
-import { Button } from '../../components/ui/button.tsx';
 import { ErrorSummary } from '../../components/ui/error-summary.tsx';
 import { Page, Section } from '../../components/ui/page.tsx';
-import { SelectField } from '../../components/ui/select-field.tsx';
-import { TextField } from '../../components/ui/text-field.tsx';
 import { orNull } from '../../forms/typed.ts';
 import { useEventForm } from '../../forms/use-event-form.ts';
 import { useFacts } from '../../queries/facts.ts';
@@ -13,10 +10,12 @@ import { useAccounts, useAlloys, useParties } from '../../queries/registers.ts';
 import { onlyPlace, placeOptions } from '../../components/domain/places.ts';
 import { PostBar } from '../../components/domain/post-bar.tsx';
 import { usePosted } from '../../components/domain/use-posted.ts';
+import { DeliveryFields } from './parts/delivery-fields.tsx';
 import type { ReceiptLine } from './parts/receipt-line.ts';
 import { emptyLine, lineBody } from './parts/receipt-line.ts';
 import { ReceiptFields } from './parts/receipt-fields.tsx';
-import { ReceiptReckoning } from './parts/receipt-reckoning.tsx';
+import { LineList } from './parts/line-list.tsx';
+import { ReceiptDecision, ReceiptReckoning, reckonReceipt } from './parts/receipt-reckoning.tsx';
 
 interface WeighInValues {
   readonly party_id: string;
@@ -51,91 +50,55 @@ export function WeighIn() {
   const line = values.lines[at] ?? emptyLine;
   const change = (next: ReceiptLine) =>
     set({ lines: values.lines.map((one, index) => (index === at ? next : one)) });
+  const reckoned = reckonReceipt(line, facts);
   const senders = parties.filter((party) => party.kind === 'supplier' || party.kind === 'customer');
   return (
     <>
       <Page title="Weigh in" lede="Booked is what the balance shows." margin="Counter">
         <Section heading="Delivery">
           <ErrorSummary errors={form.errors} shown={form.tried} />
-          <div className="fields">
-            <SelectField
-              label="From"
-              none="Choose supplier or customer"
-              value={values.party_id}
-              onChange={(party_id) => set({ party_id })}
-              options={senders.map(({ id, name, kind }) => ({
-                value: id,
-                label: name,
-                group: kind === 'supplier' ? 'Suppliers' : 'Customers',
-              }))}
-              error={errorOf('party_id')}
-            />
-            <TextField
-              label="Delivery note"
-              value={values.delivery_note}
-              onChange={(delivery_note) => set({ delivery_note })}
-              error={errorOf('delivery_note')}
-            />
-            <SelectField
-              label="Into"
-              none="Choose a safe"
-              value={values.safe_id}
-              onChange={(safe_id) => set({ safe_id })}
-              options={placeOptions(accounts, ['safe'])}
-              error={errorOf('safe_id')}
-            />
-          </div>
+          <DeliveryFields form={form} senders={senders} safes={placeOptions(accounts, ['safe'])} />
         </Section>
         <Section
           heading={`Line ${at + 1}`}
           notes={
             <>
               <p>A new lot is on hold until its acceptance checks are in.</p>
-              <p className="flex flex-col items-start gap-1">
-                {values.lines.map((one, index) => (
-                  <Button key={index} kind="quiet" onPress={() => setAt(index)}>
-                    {`${index + 1} ${one.description || 'not named yet'}${index === at ? ', at hand' : ''}`}
-                  </Button>
-                ))}
-                <Button
-                  kind="quiet"
-                  icon="plus"
-                  onPress={() => {
-                    set({ lines: [...values.lines, emptyLine] });
-                    setAt(values.lines.length);
-                  }}
-                >
-                  Add a line
-                </Button>
-                {values.lines.length > 1 ? (
-                  <Button
-                    kind="quiet"
-                    onPress={() => {
-                      set({ lines: values.lines.filter((_, index) => index !== at) });
-                      setAt(0);
-                    }}
-                  >
-                    Take this line away
-                  </Button>
-                ) : null}
-              </p>
+              <LineList
+                lines={values.lines}
+                at={at}
+                onGo={setAt}
+                onAdd={() => {
+                  set({ lines: [...values.lines, emptyLine] });
+                  setAt(values.lines.length);
+                }}
+                onTakeAway={() => {
+                  set({ lines: values.lines.filter((_, index) => index !== at) });
+                  setAt(0);
+                }}
+              />
             </>
           }
         >
-          <ReceiptFields
-            line={line}
-            onChange={change}
-            field={`lines.${at}`}
-            errorOf={errorOf}
-            alloys={alloys}
-            isCustomer={senders.find((party) => party.id === values.party_id)?.kind === 'customer'}
-          />
-          <ReceiptReckoning
-            line={line}
-            facts={facts}
-            onDecide={(decision) => change({ ...line, decision })}
-            error={errorOf(`lines.${at}.decision`)}
-          />
+          <div className="work-and-reckoning">
+            <div>
+              <ReceiptFields
+                line={line}
+                onChange={change}
+                field={`lines.${at}`}
+                errorOf={errorOf}
+                alloys={alloys}
+                isCustomer={senders.find((party) => party.id === values.party_id)?.kind === 'customer'}
+              />
+              <ReceiptDecision
+                reckoned={reckoned}
+                decision={line.decision}
+                onDecide={(decision) => change({ ...line, decision })}
+                error={errorOf(`lines.${at}.decision`)}
+              />
+            </div>
+            <ReceiptReckoning reckoned={reckoned} facts={facts} />
+          </div>
         </Section>
         <Section heading="What will be posted">
           {form.records === null ? (

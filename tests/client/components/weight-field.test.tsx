@@ -19,6 +19,17 @@ it('keeps what is typed while it is typed, and sets it right on leaving', () => 
   expect(field()).toHaveProperty('value', '38.200');
 });
 
+it('says at once where the decimals can’t be told, and only after the field was left', () => {
+  render(<Typed />);
+  fireEvent.change(field(), { target: { value: '1,234' } });
+  expect(field().getAttribute('aria-invalid')).toBeNull();
+  fireEvent.blur(field());
+  expect(field()).toHaveProperty('value', '1,234');
+  expect(field().getAttribute('aria-invalid')).toBe('true');
+  fireEvent.change(field(), { target: { value: '1.234' } });
+  expect(field().getAttribute('aria-invalid')).toBeNull();
+});
+
 it('says that the figure was typed, once there is one', () => {
   render(<Typed />);
   expect(screen.queryByText('typed')).toBeNull();

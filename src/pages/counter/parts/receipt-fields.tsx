@@ -1,5 +1,6 @@
 /** The fields of a new lot and its weighing. Choosing an alloy of the register fills its fineness in. */
 import { BASES, LOT_FORMS, ORIGINS, PIECE_FORMS } from '../../../../shared/book/lot.ts';
+import { METALS } from '../../../../shared/mass/vector.ts';
 import type { AlloyRow } from '../../../../shared/schemas/registers.ts';
 import { SelectField } from '../../../components/ui/select-field.tsx';
 import { TextField } from '../../../components/ui/text-field.tsx';
@@ -98,61 +99,57 @@ export function ReceiptFields({
         ) : null}
       </div>
       <div className="fields">
-        <WeightField
-          label="Gold"
-          unit="per 1000"
-          value={line.gold}
-          onChange={(gold) => set({ gold })}
-          error={error('gold_permille')}
-        />
-        <WeightField
-          label="Silver"
-          unit="per 1000"
-          value={line.silver}
-          onChange={(silver) => set({ silver })}
-          error={error('silver_permille')}
-        />
-        <WeightField
-          label="Platinum"
-          unit="per 1000"
-          value={line.platinum}
-          onChange={(platinum) => set({ platinum })}
-          error={error('platinum_permille')}
-        />
-        <WeightField
-          label="Palladium"
-          unit="per 1000"
-          value={line.palladium}
-          onChange={(palladium) => set({ palladium })}
-          error={error('palladium_permille')}
-        />
-      </div>
-      <div className="fields">
-        <WeighingFields
-          value={line.weighing}
-          onChange={(weighing) => set({ weighing })}
-          errorOf={(name) => error(`weighing.${name}`)}
-          stones={line.form === 'old_gold' || line.form === 'finished_work'}
-        />
-        {invoice ? (
+        {METALS.map((metal) => (
           <WeightField
-            label="Invoice weight"
-            hint="Empty where there is none."
-            value={line.invoice}
-            onChange={(text) => set({ invoice: text })}
-            error={error('invoice_gross_g')}
+            key={metal}
+            label={words(metal)}
+            unit="per 1000"
+            value={line[metal]}
+            onChange={(permille) => set({ [metal]: permille })}
+            error={error(`${metal}_permille`)}
           />
-        ) : null}
-        {PIECE_FORMS.some((form) => form === line.form) ? (
-          <TextField
-            label="Pieces"
-            inputMode="numeric"
-            value={line.pieces}
-            onChange={(pieces) => set({ pieces })}
-            error={error('pieces')}
-          />
-        ) : null}
+        ))}
       </div>
+      <ReceiptWeighing line={line} set={set} error={error} invoice={invoice} />
+    </div>
+  );
+}
+
+interface ReceiptWeighingProps {
+  readonly line: ReceiptLine;
+  readonly set: (change: Partial<ReceiptLine>) => void;
+  readonly error: (name: string) => string | null;
+  readonly invoice: boolean;
+}
+
+/** What the balance shows, beside what the invoice says. */
+function ReceiptWeighing({ line, set, error, invoice }: ReceiptWeighingProps) {
+  return (
+    <div className="fields">
+      <WeighingFields
+        value={line.weighing}
+        onChange={(weighing) => set({ weighing })}
+        errorOf={(name) => error(`weighing.${name}`)}
+        stones={line.form === 'old_gold' || line.form === 'finished_work'}
+      />
+      {invoice ? (
+        <WeightField
+          label="Invoice weight"
+          hint="Empty where there is none."
+          value={line.invoice}
+          onChange={(text) => set({ invoice: text })}
+          error={error('invoice_gross_g')}
+        />
+      ) : null}
+      {PIECE_FORMS.some((form) => form === line.form) ? (
+        <TextField
+          label="Pieces"
+          inputMode="numeric"
+          value={line.pieces}
+          onChange={(pieces) => set({ pieces })}
+          error={error('pieces')}
+        />
+      ) : null}
     </div>
   );
 }
