@@ -3,6 +3,7 @@ import type { AllowanceRow } from '../../../shared/schemas/registers.ts';
 import { Page, Section } from '../../components/ui/page.tsx';
 import type { Column } from '../../components/ui/register-table.tsx';
 import { RegisterTable } from '../../components/ui/register-table.tsx';
+import type { Option } from '../../components/ui/select-field.tsx';
 import { SelectField } from '../../components/ui/select-field.tsx';
 import { TextField } from '../../components/ui/text-field.tsx';
 import { WeightField } from '../../components/ui/weight-field.tsx';
@@ -17,7 +18,6 @@ import { WorkshopNav } from './workshop-nav.tsx';
 export function Allowances() {
   const session = useSession();
   const accounts = useAccounts();
-  const alloys = useAlloys();
   const allowances = useAllowances();
   const operations = accounts
     .filter((account) => account.operation !== null)
@@ -74,82 +74,96 @@ export function Allowances() {
       </Section>
       {session.can('allowance.set') ? (
         <>
-          <Section heading="Set an allowance">
-            <EventFields
-              event="set-allowance"
-              name="set-allowance"
-              act="Set the allowance"
-              initial={{ operation: 'sheet_work', alloy: '', percent: '', fixed: '', from: session.today }}
-              toBody={(values) => ({
-                operation: values.operation,
-                alloy: orNull(values.alloy),
-                percent: typedFigure(values.percent),
-                fixed_g: typedGramsOr(values.fixed, 'fixed_g', '0'),
-                from: values.from,
-              })}
-            >
-              {({ values, set, errorOf }) => (
-                <>
-                  <SelectField
-                    label="Operation"
-                    value={values.operation}
-                    onChange={(operation) => set({ operation })}
-                    options={operations}
-                    error={errorOf('operation')}
-                  />
-                  <SelectField
-                    label="Alloy"
-                    none="Every alloy"
-                    value={values.alloy}
-                    onChange={(alloy) => set({ alloy })}
-                    options={alloys.map(({ name }) => ({ value: name, label: name }))}
-                    error={errorOf('alloy')}
-                  />
-                  <WeightField
-                    label="Of worked metal"
-                    unit="%"
-                    value={values.percent}
-                    onChange={(percent) => set({ percent })}
-                    error={errorOf('percent')}
-                  />
-                  <WeightField
-                    label="And a fixed mass"
-                    value={values.fixed}
-                    onChange={(fixed) => set({ fixed })}
-                    error={errorOf('fixed_g')}
-                  />
-                  <TextField
-                    label="From"
-                    type="date"
-                    value={values.from}
-                    onChange={(from) => set({ from })}
-                    error={errorOf('from')}
-                  />
-                </>
-              )}
-            </EventFields>
-          </Section>
-          <Section heading="Open an operation">
-            <EventFields
-              event="open-operation"
-              name="open-operation"
-              act="Open the operation"
-              initial={{ name: '' }}
-              toBody={(values) => values}
-            >
-              {({ values, set, errorOf }) => (
-                <TextField
-                  label="Name"
-                  value={values.name}
-                  onChange={(name) => set({ name })}
-                  error={errorOf('name')}
-                />
-              )}
-            </EventFields>
-          </Section>
+          <SetAllowance operations={operations} />
+          <OpenOperation />
         </>
       ) : null}
       <BinFeeds operations={operations} />
     </Page>
+  );
+}
+
+function SetAllowance({ operations }: { readonly operations: readonly Option[] }) {
+  const { today } = useSession();
+  const alloys = useAlloys();
+  return (
+    <Section heading="Set an allowance">
+      <EventFields
+        event="set-allowance"
+        name="set-allowance"
+        act="Set the allowance"
+        initial={{ operation: 'sheet_work', alloy: '', percent: '', fixed: '', from: today }}
+        toBody={(values) => ({
+          operation: values.operation,
+          alloy: orNull(values.alloy),
+          percent: typedFigure(values.percent),
+          fixed_g: typedGramsOr(values.fixed, 'fixed_g', '0'),
+          from: values.from,
+        })}
+      >
+        {({ values, set, errorOf }) => (
+          <>
+            <SelectField
+              label="Operation"
+              value={values.operation}
+              onChange={(operation) => set({ operation })}
+              options={operations}
+              error={errorOf('operation')}
+            />
+            <SelectField
+              label="Alloy"
+              none="Every alloy"
+              value={values.alloy}
+              onChange={(alloy) => set({ alloy })}
+              options={alloys.map(({ name }) => ({ value: name, label: name }))}
+              error={errorOf('alloy')}
+            />
+            <WeightField
+              label="Of worked metal"
+              unit="%"
+              value={values.percent}
+              onChange={(percent) => set({ percent })}
+              error={errorOf('percent')}
+            />
+            <WeightField
+              label="And a fixed mass"
+              value={values.fixed}
+              onChange={(fixed) => set({ fixed })}
+              error={errorOf('fixed_g')}
+            />
+            <TextField
+              label="From"
+              type="date"
+              value={values.from}
+              onChange={(from) => set({ from })}
+              error={errorOf('from')}
+            />
+          </>
+        )}
+      </EventFields>
+    </Section>
+  );
+}
+
+function OpenOperation() {
+  return (
+    <Section heading="Open an operation">
+      <EventFields
+        event="open-operation"
+        name="open-operation"
+        act="Open the operation"
+        initial={{ name: '' }}
+        toBody={(values) => values}
+      >
+        {({ values, set, errorOf }) => (
+          <TextField
+            label="Name"
+            value={values.name}
+            onChange={(name) => set({ name })}
+            error={errorOf('name')}
+          />
+        )}
+      </EventFields>
+    </Section>
   );
 }

@@ -78,62 +78,75 @@ export function BinFeeds({ operations }: { readonly operations: readonly Option[
         />
       </Section>
       {session.can('settings.set') && bins.length > 0 ? (
-        <Section heading="Set a rate">
-          <EventFields
-            event="set-setting"
-            name="bin-feed"
-            act="Set the rate"
-            initial={{ bin_id: bins[0]?.value ?? '', operation: 'sheet_work', bench_id: '', rate: '' }}
-            toBody={({ bin_id, operation, bench_id, rate }) => {
-              const percent = typedFigure(rate);
-              return {
-                what: 'bin_feed',
-                bin_id,
-                operation,
-                bench_id: orNull(bench_id),
-                gold_percent: percent,
-                silver_percent: percent,
-                platinum_percent: percent,
-                palladium_percent: percent,
-              };
-            }}
-          >
-            {({ values, set, errorOf }) => (
-              <>
-                <SelectField
-                  label="Bin"
-                  value={values.bin_id}
-                  onChange={(bin_id) => set({ bin_id })}
-                  options={bins}
-                  error={errorOf('bin_id')}
-                />
-                <SelectField
-                  label="Operation"
-                  value={values.operation}
-                  onChange={(operation) => set({ operation })}
-                  options={operations}
-                  error={errorOf('operation')}
-                />
-                <SelectField
-                  label="At"
-                  none="Every bench"
-                  value={values.bench_id}
-                  onChange={(bench_id) => set({ bench_id })}
-                  options={benches}
-                  error={errorOf('bench_id')}
-                />
-                <WeightField
-                  label="Expected back"
-                  unit="%"
-                  value={values.rate}
-                  onChange={(rate) => set({ rate })}
-                  error={errorOf('gold_percent')}
-                />
-              </>
-            )}
-          </EventFields>
-        </Section>
+        <SetRate bins={bins} benches={benches} operations={operations} />
       ) : null}
     </>
+  );
+}
+
+interface SetRateProps {
+  readonly bins: readonly Option[];
+  readonly benches: readonly Option[];
+  readonly operations: readonly Option[];
+}
+
+/** The share that a bin is expected to bring back of what an operation loses, the same for every metal. */
+function SetRate({ bins, benches, operations }: SetRateProps) {
+  return (
+    <Section heading="Set a rate">
+      <EventFields
+        event="set-setting"
+        name="bin-feed"
+        act="Set the rate"
+        initial={{ bin_id: bins[0]?.value ?? '', operation: 'sheet_work', bench_id: '', rate: '' }}
+        toBody={({ bin_id, operation, bench_id, rate }) => {
+          const percent = typedFigure(rate);
+          return {
+            what: 'bin_feed',
+            bin_id,
+            operation,
+            bench_id: orNull(bench_id),
+            gold_percent: percent,
+            silver_percent: percent,
+            platinum_percent: percent,
+            palladium_percent: percent,
+          };
+        }}
+      >
+        {({ values, set, errorOf }) => (
+          <>
+            <SelectField
+              label="Bin"
+              value={values.bin_id}
+              onChange={(bin_id) => set({ bin_id })}
+              options={bins}
+              error={errorOf('bin_id')}
+            />
+            <SelectField
+              label="Operation"
+              value={values.operation}
+              onChange={(operation) => set({ operation })}
+              options={operations}
+              error={errorOf('operation')}
+            />
+            <SelectField
+              label="At"
+              none="Every bench"
+              value={values.bench_id}
+              onChange={(bench_id) => set({ bench_id })}
+              options={benches}
+              error={errorOf('bench_id')}
+            />
+            <WeightField
+              label="Expected back"
+              unit="%"
+              value={values.rate}
+              onChange={(rate) => set({ rate })}
+              error={errorOf('gold_percent')}
+            />
+          </>
+        )}
+      </EventFields>
+    </Section>
   );
 }
