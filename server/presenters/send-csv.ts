@@ -1,8 +1,12 @@
 /** Sends rows as a CSV file: the columns are the fields of the rows, in their order. */
-import type { Response } from 'express';
+import type { Request, Response } from 'express';
 import { csvTable } from '../../shared/dossier/csv.ts';
 
 type Cell = string | boolean | number | null;
+
+/** Whether a list is wanted as CSV: by its address, or by what the asker accepts before JSON. */
+export const wantsCsv = (request: Request, query: { readonly format: 'json' | 'csv' }): boolean =>
+  query.format === 'csv' || request.accepts(['application/json', 'text/csv']) === 'text/csv';
 
 /** Writes the response; gives null, since nothing is left to answer. */
 export function sendCsv(

@@ -5,7 +5,7 @@ import { id } from '../../shared/schemas/primitives.ts';
 import { voucherQuery } from '../../shared/schemas/vouchers.ts';
 import { z } from '../../shared/schemas/zod.ts';
 import { ProblemError } from '../problem.ts';
-import { sendCsv } from '../presenters/send-csv.ts';
+import { sendCsv, wantsCsv } from '../presenters/send-csv.ts';
 import { checkQuery } from '../services/events/check-body.ts';
 import { lotLabel } from '../services/documents/lot-label.ts';
 import { lotList, lotWholeOf } from '../services/reads/lots.ts';
@@ -31,10 +31,10 @@ export const lotAndVoucherRoutes: readonly Route[] = [
     path: '/lots',
     allow: 'book.read',
     summary: 'Lots, newest first.',
-    async handle({ context, who, query, response }) {
+    async handle({ context, who, query, request, response }) {
       const read = checkQuery(lotQuery, query);
       const page = await context.db.inScope(who, (tx) => lotList(tx, read));
-      return read.format === 'csv' ? sendCsv(response, 'lots', page.rows) : { body: page };
+      return wantsCsv(request, read) ? sendCsv(response, 'lots', page.rows) : { body: page };
     },
   },
   {
@@ -80,10 +80,10 @@ export const lotAndVoucherRoutes: readonly Route[] = [
     path: '/vouchers',
     allow: 'book.read',
     summary: 'The register of vouchers, newest first.',
-    async handle({ context, who, query, response }) {
+    async handle({ context, who, query, request, response }) {
       const read = checkQuery(voucherQuery, query);
       const page = await context.db.inScope(who, (tx) => voucherList(tx, read));
-      return read.format === 'csv' ? sendCsv(response, 'vouchers', page.rows) : { body: page };
+      return wantsCsv(request, read) ? sendCsv(response, 'vouchers', page.rows) : { body: page };
     },
   },
   {

@@ -1,6 +1,6 @@
 /** Statements beside the reports: an owner's metal, and the consignments to refiners; each as JSON and as CSV. */
 import { ownerStatementQuery, refinersQuery } from '../../shared/schemas/statements.ts';
-import { sendCsv } from '../presenters/send-csv.ts';
+import { sendCsv, wantsCsv } from '../presenters/send-csv.ts';
 import { checkQuery } from '../services/events/check-body.ts';
 import { readOwnerStatement } from '../services/reports/owner-statement.ts';
 import { readRefiners, refinerLines } from '../services/reports/refiners.ts';
@@ -13,11 +13,11 @@ export const statementRoutes: readonly Route[] = [
     path: '/reports/statements/owner/:party_id',
     allow: 'report.read',
     summary: 'The metal statement of a customer or supplier: movements, loss charged, what is owed.',
-    async handle({ context, who, params, query, response }) {
+    async handle({ context, who, params, query, request, response }) {
       const party_id = pathId(params['party_id']);
       const read = checkQuery(ownerStatementQuery, query);
       const report = await context.db.inScope(who, (tx) => readOwnerStatement(tx, party_id, read));
-      return read.format === 'csv' ? sendCsv(response, 'statement', report.movements) : { body: report };
+      return wantsCsv(request, read) ? sendCsv(response, 'statement', report.movements) : { body: report };
     },
   },
   {
@@ -25,10 +25,12 @@ export const statementRoutes: readonly Route[] = [
     path: '/reports/refiners',
     allow: 'report.read',
     summary: 'Consignments to refiners: sent, expected, found, kept, credited, and the days it took.',
-    async handle({ context, who, query, response }) {
+    async handle({ context, who, query, request, response }) {
       const read = checkQuery(refinersQuery, query);
       const page = await context.db.inScope(who, (tx) => readRefiners(tx, read));
-      return read.format === 'csv' ? sendCsv(response, 'refiners', refinerLines(page.rows)) : { body: page };
+      return wantsCsv(request, read)
+        ? sendCsv(response, 'refiners', refinerLines(page.rows))
+        : { body: page };
     },
   },
 ];

@@ -28,6 +28,8 @@ export const paths = {
   balances: '/reports/balances',
   losses: '/reports/losses',
   reconciliation: '/reports/reconciliation',
+  refiners: '/reports/refiners',
+  statement: '/reports/statement',
   vouchers: '/reports/vouchers',
   voucher: (id: string) => `/reports/vouchers/${id}`,
   insurance: '/insurance',

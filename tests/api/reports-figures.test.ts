@@ -93,6 +93,16 @@ describe('balances', () => {
   });
 });
 
+describe('what is accepted', () => {
+  it('gives CSV to who accepts CSV alone, and JSON to who accepts anything', async () => {
+    const type = async (accept: string) =>
+      (await months.owner.get('/reports/balances').set('Accept', accept)).headers['content-type'];
+    expect(await type('text/csv')).toContain('text/csv');
+    expect(await type('*/*')).toContain('application/json');
+    expect(await type('application/json, text/csv')).toContain('application/json');
+  });
+});
+
 describe('losses', () => {
   const losses = async (query: string) =>
     lossesJson.parse((await months.owner.get(`/reports/losses?${query}`)).body);

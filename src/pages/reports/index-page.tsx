@@ -24,6 +24,16 @@ const REPORTS = [
     words: 'Opening, in, out, loss and closing of a period. Every figure opens its vouchers.',
   },
   {
+    to: paths.refiners,
+    name: 'Refiners',
+    words: 'Each consignment: sent, expected, found, kept, credited, and the days it took.',
+  },
+  {
+    to: paths.statement,
+    name: 'Statements',
+    words: 'The metal of one customer or supplier: movements, loss charged, what is owed.',
+  },
+  {
     to: paths.vouchers,
     name: 'Vouchers',
     words: 'Every voucher in its order, each with its entries, its hash and who signed it.',

@@ -6,6 +6,8 @@ const REPORTS = [
   { to: paths.balances, name: 'Balances' },
   { to: paths.losses, name: 'Losses' },
   { to: paths.reconciliation, name: 'Reconciliation' },
+  { to: paths.refiners, name: 'Refiners' },
+  { to: paths.statement, name: 'Statements' },
   { to: paths.vouchers, name: 'Vouchers' },
 ] as const;
 

@@ -10,6 +10,11 @@ export const reportRoutes: RouteObject[] = [
     path: paths.reconciliation,
     lazy: async () => ({ Component: (await import('./reconciliation.tsx')).ReconciliationPage }),
   },
+  { path: paths.refiners, lazy: async () => ({ Component: (await import('./refiners.tsx')).RefinersPage }) },
+  {
+    path: paths.statement,
+    lazy: async () => ({ Component: (await import('./statement.tsx')).StatementPage }),
+  },
   { path: paths.vouchers, lazy: async () => ({ Component: (await import('./vouchers.tsx')).VouchersPage }) },
   {
     path: paths.voucher(':id'),
