@@ -38,6 +38,7 @@ export async function startTestServer(
   const { privateKey } = generateKeyPairSync('ed25519');
   const config: Config = {
     port: 0,
+    host: '127.0.0.1',
     public_url: null,
     database_url: db.app_url,
     database_pool: 10,
@@ -123,6 +124,12 @@ export class Person {
   /** Uses other cookies from now on. */
   carry(cookies: readonly string[]): void {
     this.#cookies = [...cookies];
+  }
+
+  /** The same session, asked of this one's process. */
+  as(other: Person): this {
+    this.#cookies = [...other.cookies];
+    return this;
   }
 
   get cookies(): readonly string[] {
