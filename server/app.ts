@@ -18,10 +18,19 @@ import { sameSiteOnly } from './middleware/same-site.ts';
 import { jsonOnly, shallowOnly } from './middleware/json-only.ts';
 import { ProblemError } from './problem.ts';
 import { routes } from './routes/index.ts';
+import { unavailable } from './db/database-problem.ts';
 
 const BODY_LIMIT = '1mb';
 
-export function createApp(context: AppContext, local_mail: LocalMail | null = null): Express {
+/**
+ * Makes the app. `isOpen` tells whether the database has been looked at: until then only life signs are answered, so that
+ * nothing is ever served from a database whose rules could be switched off.
+ */
+export function createApp(
+  context: AppContext,
+  local_mail: LocalMail | null = null,
+  isOpen: () => boolean = () => true,
+): Express {
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', context.config.trust_proxy ? 1 : false);
@@ -48,6 +57,10 @@ export function createApp(context: AppContext, local_mail: LocalMail | null = nu
     shallowOnly(),
   );
   app.get('/metrics', measured.page);
+  app.use('/api', (request, _response, next) => {
+    if (isOpen() || request.path === '/v1/health/live') next();
+    else throw unavailable();
+  });
   app.get('/api/v1/openapi.json', (_request, response) => void response.json(openApiDocument(routes)));
   app.get('/api/v1/docs', (_request, response) => void response.type('html').send(openApiPage(routes)));
   if (local_mail !== null) app.get('/mail', mailPage(local_mail));

@@ -5,11 +5,25 @@
 import { readFileSync } from 'node:fs';
 import { z } from '../shared/schemas/zod.ts';
 
+/** Https, or the loopback of one's own machine, where nothing crosses a network. */
+function isSafe(url: string): boolean {
+  if (!URL.canParse(url)) return true;
+  const { protocol, hostname } = new URL(url);
+  return protocol === 'https:' || ['127.0.0.1', 'localhost', '[::1]'].includes(hostname);
+}
+
 const required = (sentence: string) => z.string({ error: sentence }).min(1, sentence);
 
 const environment = z.object({
-  PORT: z.coerce.number().int().min(0).max(65_535).default(4180),
-  PUBLIC_URL: z.url('PUBLIC_URL is the address that people type, such as http://127.0.0.1:4180.').optional(),
+  PORT: z.coerce.number('PORT is a number.').int('PORT is a whole number.').min(0).max(65_535).default(4180),
+  HOST: z.string().min(1).default('127.0.0.1'),
+  PUBLIC_URL: z
+    .url('PUBLIC_URL is the address that people type, such as https://book.example.')
+    .refine(
+      isSafe,
+      'PUBLIC_URL has to be https: over plain http a session could be read on the way. Only this machine’s own loopback may do without.',
+    )
+    .optional(),
   DATABASE_URL: required('DATABASE_URL is not set: the database and the role that the program runs as.'),
   DATABASE_POOL: z.coerce.number().int().min(1).max(100).default(10),
   JWT_SECRET: required('JWT_SECRET is not set: at least 32 random characters.').min(
@@ -33,6 +47,8 @@ const environment = z.object({
 
 export interface Config {
   readonly port: number;
+  /** The address that is listened on. */
+  readonly host: string;
   /** Null until the port is known: then the address of this machine's loopback. */
   readonly public_url: string | null;
   readonly database_url: string;
@@ -57,11 +73,12 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
   const e = read.data;
   return {
     port: e.PORT,
-    public_url: e.PUBLIC_URL ?? null,
+    host: e.HOST,
+    public_url: e.PUBLIC_URL?.replace(/\/+$/, '') ?? null,
     database_url: e.DATABASE_URL,
     database_pool: e.DATABASE_POOL,
     jwt_secret: e.JWT_SECRET,
-    signing_key_pem: readFileSync(e.SIGNING_KEY_FILE, 'utf8'),
+    signing_key_pem: readKey(e.SIGNING_KEY_FILE),
     bcrypt_cost: e.BCRYPT_COST,
     smtp_url: e.SMTP_URL ?? null,
     mail_from: e.MAIL_FROM,
@@ -73,4 +90,12 @@ export function readConfig(env: Readonly<Record<string, string | undefined>>): C
     log_level: e.LOG_LEVEL,
     trust_proxy: e.TRUST_PROXY === 'yes',
   };
+}
+
+function readKey(file: string): string {
+  try {
+    return readFileSync(file, 'utf8');
+  } catch {
+    throw new Error(`- SIGNING_KEY_FILE names a file that can’t be read: ${file}`);
+  }
 }

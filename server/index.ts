@@ -14,6 +14,7 @@ import { startContext } from './start-context.ts';
 
 const RETRY_MS = 2_000;
 const LAST_ANSWERS_MS = 10_000;
+const IDLE_LOOK_MS = 50;
 
 const config = (() => {
   try {
@@ -27,11 +28,14 @@ const config = (() => {
 let address = config.public_url ?? `http://127.0.0.1:${config.port}`;
 const started = await startContext(config, () => address);
 const { context } = started;
+/** Nothing is answered from a database before it has been looked at. */
+let checked = false;
+let ending = false;
 const server = createServer(
   { requestTimeout: 30_000, headersTimeout: 15_000, keepAliveTimeout: 10_000 },
-  createApp(context, started.local_mail),
+  createApp(context, started.local_mail, () => checked),
 );
-server.listen(config.port, '127.0.0.1', () => {
+server.listen(config.port, config.host, () => {
   const bound = server.address();
   if (config.public_url === null && bound !== null && typeof bound === 'object')
     address = `http://127.0.0.1:${bound.port}`;
@@ -54,6 +58,7 @@ process.on('unhandledRejection', (error) => {
 
 let worker: Worker | null = null;
 await whenReachable();
+checked = true;
 worker = startWorker(context.db, workOf(context), context.log);
 
 async function whenReachable(): Promise<void> {
@@ -72,11 +77,17 @@ async function whenReachable(): Promise<void> {
   }
 }
 
+/** No new connection; what runs is answered, within ten seconds; then the parts close, the database last. */
 async function end(): Promise<void> {
+  if (ending) return;
+  ending = true;
   setTimeout(() => process.exit(1), LAST_ANSWERS_MS).unref();
-  server.close();
-  server.closeIdleConnections();
+  const answered = new Promise<void>((resolve) => server.close(() => resolve()));
+  const idle = setInterval(() => server.closeIdleConnections(), IDLE_LOOK_MS);
+  await context.stream.close();
   await worker?.stop();
+  await answered;
+  clearInterval(idle);
   await started.close();
   process.exit(0);
 }

@@ -14,7 +14,7 @@ const databaseFault = z.object({
 
 /** The problem for an error that came from the database, or null where it is none that a user can act on. */
 export function databaseProblem(error: unknown): ProblemError | null {
-  if (error instanceof ConnectionError || error instanceof ConnectionAcquireTimeoutError)
+  if (error instanceof ConnectionError || error instanceof ConnectionAcquireTimeoutError || isLost(error))
     return unavailable();
   if (!(error instanceof BaseError)) return null;
   const read = databaseFault.safeParse('original' in error ? error.original : null);
@@ -31,6 +31,11 @@ export function databaseProblem(error: unknown): ProblemError | null {
   }
   return ruleProblem(code, detail ?? null);
 }
+
+/** What the driver says of a connection that broke under a statement; it gives no code then. */
+const LOST = /^connection terminated|connection error and is not queryable|^read ECONNRESET|^write EPIPE/i;
+
+const isLost = (error: unknown): boolean => error instanceof Error && LOST.test(error.message);
 
 function ruleProblem(code: string, detail: string | null): ProblemError | null {
   switch (code) {
@@ -64,7 +69,8 @@ function ruleProblem(code: string, detail: string | null): ProblemError | null {
   }
 }
 
-function unavailable(): ProblemError {
+/** The book can't be reached for now. */
+export function unavailable(): ProblemError {
   const sentence =
     'The book can’t be reached for the moment. Nothing was posted; try again in a few seconds.';
   return new ProblemError('unavailable', sentence, { retry_after_s: 5 });

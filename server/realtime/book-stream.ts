@@ -13,6 +13,8 @@ const TOGETHER_MS = 200;
 const HEARTBEAT_MS = 25_000;
 const RETRY_MS = 2_000;
 const MOST_SCREENS = 500;
+/** The browser opens it again by itself, and is then asked anew who it is: a session that has ended hears no more. */
+const LONGEST_MS = 60_000;
 
 export interface BookStream {
   /** Tells every process that a workshop's book reached a sequence. */
@@ -74,7 +76,11 @@ export function bookStream(database_url: string, log: Logger): BookStream {
       response.writeHead(200, { 'Content-Type': 'text/event-stream', 'Cache-Control': 'no-store' });
       response.write(': listening\n\n');
       screens.set(response, workshop_id);
-      response.on('close', () => screens.delete(response));
+      const longest = setTimeout(() => response.end(), LONGEST_MS).unref();
+      response.on('close', () => {
+        clearTimeout(longest);
+        screens.delete(response);
+      });
       return true;
     },
     async close() {
