@@ -32,9 +32,9 @@ describe('a customer’s metal statement', () => {
         (m) => `${m.business_date} ${m.name} ${m.gross_g} ${m.gold_g} ${m.job_code ?? 'no job'}`,
       ),
     ).toEqual([
-      '2026-02-10 From customers 20.000000 11.700000 no job',
-      '2026-02-15 Working loss -0.100000 -0.058500 J-1188',
-      '2026-02-25 To customers -5.000000 -2.925000 no job',
+      '2026-02-10 Brought 20.000000 11.700000 no job',
+      '2026-02-15 Loss charged -0.100000 -0.058500 J-1188',
+      '2026-02-25 Given back -5.000000 -2.925000 no job',
     ]);
     expect([report.opening.gold_g, report.closing.gold_g]).toEqual(['0.000000', '8.716500']);
     expect([report.lost.gold_g, report.owed.gold_g, report.more]).toEqual(['0.000000', '0.000000', false]);

@@ -23,6 +23,15 @@ import { readReconciliation } from './reconciliation.ts';
 
 const MOST_MOVEMENTS = 2000;
 
+/** The lines of a reconciliation as the owner reads them. */
+const OWNERS_WORDS = {
+  ...RECONCILIATION_WORDS,
+  from_suppliers: 'Brought, less taken back',
+  from_customers: 'Brought',
+  to_customers: 'Given back',
+  working_loss: 'Loss charged',
+} as const;
+
 const movementRow = ownerMovement.omit({ line: true, name: true }).extend({
   account_kind: z.enum(ACCOUNT_KINDS),
   voucher_kind: z.enum(VOUCHER_KINDS),
@@ -55,7 +64,7 @@ export async function readOwnerStatement(
     .slice(0, MOST_MOVEMENTS)
     .flatMap(({ account_kind, voucher_kind, side, because, ...row }) => {
       const line = lineOf({ account_kind, voucher_kind, side, because });
-      return line === null ? [] : [{ ...row, line, name: RECONCILIATION_WORDS[line] }];
+      return line === null ? [] : [{ ...row, line, name: OWNERS_WORDS[line] }];
     });
   const lost = massFromJson(await tx.one(masses, LOST, [to, party_id]));
   const made_good = massFromJson(await tx.one(masses, MADE_GOOD, [to, party_id]));
@@ -64,7 +73,7 @@ export async function readOwnerStatement(
     from,
     to,
     opening,
-    lines,
+    lines: lines.map((line) => ({ ...line, name: OWNERS_WORDS[line.line] })),
     closing,
     movements,
     more: rows.length > MOST_MOVEMENTS,
