@@ -1,4 +1,5 @@
 /** Lots: the list by filter, one whole, what the scan field finds. */
+import type { InfiniteData, UseInfiniteQueryResult } from '@tanstack/react-query';
 import { useInfiniteQuery, useSuspenseQuery } from '@tanstack/react-query';
 import { lotPage, lotWhole } from '../../shared/schemas/lots.ts';
 import { searchHit } from '../../shared/schemas/search.ts';
@@ -7,11 +8,11 @@ import { get } from '../lib/api-client.ts';
 import { keys } from './keys.ts';
 
 /** A list read page by page: `query` is its address without the cursor. */
-export function usePages<Row>(
+export function usePages<Page extends { readonly next_cursor: string | null }>(
   path: string,
   query: string,
-  page: z.ZodType<{ rows: Row[]; next_cursor: string | null }>,
-) {
+  page: z.ZodType<Page>,
+): UseInfiniteQueryResult<InfiniteData<Page>> {
   return useInfiniteQuery({
     queryKey: keys.list(path, query),
     initialPageParam: '',

@@ -8,6 +8,7 @@ import type { Browser, Page } from 'playwright-core';
 import { createApp } from '../../server/app.ts';
 import { workOf } from '../../server/jobs/kinds.ts';
 import { startWorker } from '../../server/jobs/worker.ts';
+import { z } from '../../shared/schemas/zod.ts';
 import { PASSWORD, startTestServer } from './server.ts';
 import type { TestServer } from './server.ts';
 
@@ -96,16 +97,17 @@ export async function choose(page: Page, label: string, words: string | RegExp):
 
 const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
+const axeResult = z.object({
+  violations: z.array(
+    z.object({ id: z.string(), nodes: z.array(z.object({ target: z.array(z.unknown()) })) }),
+  ),
+});
+
 /** What the accessibility check finds on the page as it is: rule and place of each violation. */
 export async function accessibilityFaults(page: Page): Promise<string[]> {
   await page.evaluate(axeSource);
-  return page.evaluate(async () => {
-    const { axe } = window as unknown as {
-      axe: { run(): Promise<{ violations: { id: string; nodes: { target: string[] }[] }[] }> };
-    };
-    const { violations } = await axe.run();
-    return violations.map(
-      ({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`,
-    );
-  });
+  const { violations } = axeResult.parse(await page.evaluate('axe.run()'));
+  return violations.map(
+    ({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(', ')}`,
+  );
 }
