@@ -67,12 +67,14 @@ describe('the reconciliation of a period', () => {
     expect(screen.getByRole('row', { name: /^Left over/ }).textContent).toContain('+0.100');
   });
 
-  it('opens the vouchers of the period and the kind behind a figure', async () => {
+  it('opens the vouchers of the period, the owner and the line behind a figure', async () => {
     open(masses('0.000000', '0.000000'));
     const line = await screen.findByRole('row', { name: /^From suppliers/ });
     const figures = within(line).getAllByRole('link');
     expect(figures.map((figure) => figure.textContent)).toEqual(['+20.000', '+20.000']);
-    expect(figures[0]?.getAttribute('href')).toBe(`/reports/vouchers?${SPAN}&kind=weigh_in`);
+    expect(figures[0]?.getAttribute('href')).toBe(
+      `/reports/vouchers?${SPAN}&owner=house&line=from_suppliers`,
+    );
   });
 
   it('leaves out the lines of which nothing came or went', async () => {
