@@ -6,6 +6,7 @@ import { keyIdOf } from '../cli/node-crypto.ts';
 import { backgroundJobById, backgroundJobsOf, enqueue } from '../jobs/queue.ts';
 import { ProblemError } from '../problem.ts';
 import { readDocument } from '../services/documents/documents.ts';
+import { securityEvent } from '../security-log.ts';
 import { checkBody } from '../services/events/check-body.ts';
 import { pathId } from './lots-and-vouchers.ts';
 import type { Route } from './route.ts';
@@ -43,13 +44,11 @@ export const dossierRoutes: readonly Route[] = [
     path: '/dossiers',
     allow: 'dossier.make',
     summary: 'Asks for a dossier of the whole book.',
-    async handle({ context, who, body }) {
-      const input = checkBody(makeBody, body);
+    async handle(call) {
+      const { context, who } = call;
+      const input = checkBody(makeBody, call.body);
       const id = await context.db.inScope(who, (tx) => enqueue(tx, 'dossier', input, who.person_id));
-      context.log.info(
-        { event: 'dossier_asked', person_id: who.person_id, workshop_id: who.workshop_id },
-        'a dossier was asked for',
-      );
+      securityEvent(call, 'export_asked', { job: id });
       return { status: 202, body: { id } };
     },
   },
