@@ -30,6 +30,8 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['tests/client/**/*.test.{ts,tsx}'],
           setupFiles: ['tests/client/setup.ts'],
+          // A table of hundreds of rows is slow to draw in jsdom on a machine that is busy.
+          testTimeout: 30_000,
         },
       },
       {

@@ -156,7 +156,8 @@ describe('the proprietor', () => {
     ];
     expect(await faultsOn(visitor, [...pages, ...settings, ...reports])).toEqual({});
     expect(visitor.errors).toEqual([]);
-  });
+    // Thirty pages, one after the other, take longer than one path does.
+  }, 300_000);
 });
 
 describe('the auditor', () => {
