@@ -31,7 +31,7 @@ export default defineConfig({
           include: ['tests/client/**/*.test.{ts,tsx}'],
           setupFiles: ['tests/client/setup.ts'],
           // A table of hundreds of rows is slow to draw in jsdom on a machine that is busy.
-          testTimeout: 30_000,
+          testTimeout: 60_000,
         },
       },
       {
@@ -40,8 +40,8 @@ export default defineConfig({
           name: 'server',
           environment: 'node',
           include: ['tests/{api,database,faults,dossier,seed}/**/*.test.ts'],
-          testTimeout: 30_000,
-          hookTimeout: 60_000,
+          testTimeout: 60_000,
+          hookTimeout: 120_000,
           maxWorkers: 2,
           // Projects with different numbers of workers run one after the other.
           sequence: { groupOrder: 1 },
@@ -53,7 +53,7 @@ export default defineConfig({
           name: 'browser',
           environment: 'node',
           include: ['tests/browser/**/*.test.ts'],
-          testTimeout: 120_000,
+          testTimeout: 300_000,
           hookTimeout: 180_000,
           maxWorkers: 1,
           sequence: { groupOrder: 2 },
