@@ -42,8 +42,10 @@ export function run(program, args, options = {}) {
     child.stdout?.on('data', (data) => (output += data));
     child.stderr?.on('data', (data) => (output += data));
     child.on('error', reject);
-    child.on('close', (code) => {
+    child.on('close', (code, signal) => {
       children.delete(child);
+      if (signal !== null && !ending)
+        process.stderr.write(`${program} was ended from outside by ${signal}.\n`);
       if (!ending || last) resolve({ code: code ?? 1, output });
     });
   });
